@@ -1,0 +1,13 @@
+/** The solver's public surface: other folders import only this. */
+export { MU0 } from "./constants.ts";
+export { countNodes, cutGrid } from "./grid/cut.ts";
+export { type ArcOfEdge, makePatchMesh, tensorPatches } from "./grid/patches.ts";
+export type {
+  Circuit,
+  Complex,
+  ComplexVector,
+  Exterior,
+  Grid,
+  PatchMesh,
+  RegionMaterial,
+} from "./types.ts";
