@@ -1,140 +1,101 @@
 /** x = A⁻¹ b for A = Σ_e P_eᵀ A_e P_e complex symmetric: analyse once per structure, factorise per matrix, solve per right-hand side. */
 import { SolverError } from "../errors.ts";
 import type { ComplexVector } from "../types.ts";
-import type { ElementStructure, ElementValues } from "./structure.ts";
+import { dissect } from "./dissection.ts";
+import type { FactorNumbers } from "./front.ts";
+import { factoriseFronts } from "./numeric.ts";
+import { residual } from "./residual.ts";
+import { solveFronts } from "./solve.ts";
+import { checkStructure, checkValues, type ElementStructure, type ElementValues } from "./structure.ts";
+import { type Fronts, frontsOf, triangle } from "./symbolic.ts";
 
+export { type Residual, residual } from "./residual.ts";
 export type { ElementStructure, ElementValues } from "./structure.ts";
 
-/** Ordering and symbolic factorisation; opaque, reused for all matrices of one structure. */
+/** Ordering and symbolic factorisation; reused for all matrices of one structure. */
 export interface Analysis {
   readonly structure: ElementStructure;
-  /** Numbers kept in the factor. */
+  /** Complex numbers the factor will keep: L below the diagonal, and D. */
   readonly entries: number;
+  /** Complex multiplications a factorisation takes. */
+  readonly multiplications: number;
+  readonly fronts: Fronts;
+  /** Per element the index of its first value; length elements + 1. */
+  readonly valueStart: Int32Array;
 }
 
-/** A = L D Lᵀ; opaque. */
+/** A = L D Lᵀ. */
 export interface Factor {
   readonly analysis: Analysis;
-  readonly a: ComplexVector;
+  readonly numbers: FactorNumbers;
 }
 
 /** A refined solution with its backward error. */
 export interface RefinedSolution {
   readonly x: ComplexVector;
-  /** max_i |b − A x|_i / (|A| |x| + |b|)_i, |A| taken element by element. */
+  /** max_i |b − A x|_i / (|A| |x| + |b|)_i, |A| taken element by element; see `residual`. */
   readonly residual: number;
 }
 
-/** Orders the unknowns. Throws SolverError `structure` when ids are out of range or arrays do not fit. */
+/** Orders the unknowns and lays out the factor. Throws SolverError `structure` when the arrays do not describe a matrix. */
 export function analyse(structure: ElementStructure): Analysis {
-  return { structure, entries: structure.unknowns ** 2 };
+  checkStructure(structure);
+  const { start } = structure;
+  const valueStart = new Int32Array(start.length);
+  for (let e = 0; e + 1 < start.length; e++)
+    valueStart[e + 1] = valueStart[e] + triangle(start[e + 1] - start[e]);
+  const fronts = frontsOf(structure, dissect(structure));
+  const count = fronts.rows.length;
+  return {
+    structure,
+    entries: fronts.entryStart[count] + structure.unknowns,
+    multiplications: fronts.work[count],
+    fronts,
+    valueStart,
+  };
 }
 
 /**
  * A = L D Lᵀ. `onProgress` hears the done fraction 0…1 now and then and may throw to abort.
- * Throws SolverError `singular` at a zero or non-finite pivot.
+ * Throws SolverError `structure` when the values do not fit, `singular` at a zero or non-finite pivot.
  */
 export function factorise(
   analysis: Analysis,
   values: ElementValues,
   onProgress?: (fraction: number) => void,
 ): Factor {
-  const { unknowns: n, start, ids } = analysis.structure;
-  const re = new Float64Array(n * n);
-  const im = new Float64Array(n * n);
-  for (let e = 0, v = 0; e + 1 < start.length; e++)
-    for (let i = start[e]; i < start[e + 1]; i++)
-      for (let j = start[e]; j <= i; j++, v++) {
-        const at = Math.max(ids[i], ids[j]) * n + Math.min(ids[i], ids[j]);
-        re[at] += values.re[v];
-        im[at] += values.im[v];
-      }
-  for (let k = 0; k < n; k++) {
-    const dr = re[k * n + k];
-    const di = im[k * n + k];
-    const q = dr * dr + di * di;
-    if (!(q > 0 && q < Infinity)) throw new SolverError("singular", `pivot ${k} is zero or not finite`);
-    for (let i = k + 1; i < n; i++) {
-      const wr = re[i * n + k];
-      const wi = im[i * n + k];
-      const lr = (wr * dr + wi * di) / q;
-      const li = (wi * dr - wr * di) / q;
-      for (let j = k + 1; j <= i; j++) {
-        re[i * n + j] -= lr * re[j * n + k] - li * im[j * n + k];
-        im[i * n + j] -= lr * im[j * n + k] + li * re[j * n + k];
-      }
-    }
-    for (let i = k + 1; i < n; i++) {
-      const wr = re[i * n + k];
-      const wi = im[i * n + k];
-      re[i * n + k] = (wr * dr + wi * di) / q;
-      im[i * n + k] = (wi * dr - wr * di) / q;
-    }
-    onProgress?.((k + 1) / n);
-  }
-  return { analysis, a: { re, im } };
+  const { structure, fronts, valueStart } = analysis;
+  checkValues(values, valueStart[valueStart.length - 1]);
+  return { analysis, numbers: factoriseFronts(structure, valueStart, fronts, values, onProgress) };
 }
 
 /** A x = b for `count` right-hand sides stored one after another; returns new arrays of the same length. */
 export function solve(factor: Factor, rhs: ComplexVector, count = 1): ComplexVector {
-  const n = factor.analysis.structure.unknowns;
-  const { re, im } = factor.a;
-  const xr = rhs.re.slice();
-  const xi = rhs.im.slice();
-  for (let o = 0; o < count * n; o += n) {
-    for (let i = 0; i < n; i++)
-      for (let k = 0; k < i; k++) {
-        const at = i * n + k;
-        xr[o + i] -= re[at] * xr[o + k] - im[at] * xi[o + k];
-        xi[o + i] -= re[at] * xi[o + k] + im[at] * xr[o + k];
-      }
-    for (let i = n - 1; i >= 0; i--) {
-      const dr = re[i * n + i];
-      const di = im[i * n + i];
-      const q = dr * dr + di * di;
-      const a = (xr[o + i] * dr + xi[o + i] * di) / q;
-      const b = (xi[o + i] * dr - xr[o + i] * di) / q;
-      xr[o + i] = a;
-      xi[o + i] = b;
-      for (let k = i + 1; k < n; k++) {
-        const at = k * n + i;
-        xr[o + i] -= re[at] * xr[o + k] - im[at] * xi[o + k];
-        xi[o + i] -= re[at] * xi[o + k] + im[at] * xr[o + k];
-      }
+  const { fronts, structure } = factor.analysis;
+  const n = structure.unknowns;
+  if (rhs.re.length !== n * count || rhs.im.length !== n * count)
+    throw new SolverError(
+      "structure",
+      `${count} right-hand sides need ${n * count} numbers, got ${rhs.re.length}`,
+    );
+  const { newNumber } = fronts;
+  const x = { re: new Float64Array(n * count), im: new Float64Array(n * count) };
+  const y = { re: new Float64Array(n), im: new Float64Array(n) };
+  for (let from = 0; from < n * count; from += n) {
+    for (let i = 0; i < n; i++) {
+      y.re[newNumber[i]] = rhs.re[from + i];
+      y.im[newNumber[i]] = rhs.im[from + i];
+    }
+    solveFronts(fronts, factor.numbers, y);
+    for (let i = 0; i < n; i++) {
+      x.re[from + i] = y.re[newNumber[i]];
+      x.im[from + i] = y.im[newNumber[i]];
     }
   }
-  return { re: xr, im: xi };
+  return x;
 }
 
-/** r = b − A x by elements, and the backward error max_i |r_i| / (|A| |x| + |b|)_i. */
-export function residual(
-  structure: ElementStructure,
-  values: ElementValues,
-  x: ComplexVector,
-  b: ComplexVector,
-): { readonly r: ComplexVector; readonly error: number } {
-  const rr = b.re.slice();
-  const ri = b.im.slice();
-  const scale = b.re.map((v, i) => Math.hypot(v, b.im[i]));
-  const { start, ids } = structure;
-  const add = (i: number, j: number, ar: number, ai: number) => {
-    rr[i] -= ar * x.re[j] - ai * x.im[j];
-    ri[i] -= ar * x.im[j] + ai * x.re[j];
-    scale[i] += Math.hypot(ar, ai) * Math.hypot(x.re[j], x.im[j]);
-  };
-  for (let e = 0, v = 0; e + 1 < start.length; e++)
-    for (let i = start[e]; i < start[e + 1]; i++)
-      for (let j = start[e]; j <= i; j++, v++) {
-        add(ids[i], ids[j], values.re[v], values.im[v]);
-        if (j < i) add(ids[j], ids[i], values.re[v], values.im[v]);
-      }
-  let error = 0;
-  for (let i = 0; i < rr.length; i++)
-    if (scale[i] > 0) error = Math.max(error, Math.hypot(rr[i], ri[i]) / scale[i]);
-  return { r: { re: rr, im: ri }, error };
-}
-
-/** x with one step of iterative refinement, and its backward error (see `residual`). */
+/** x with one step of iterative refinement, and its backward error. `rhs` holds one right-hand side. */
 export function solveRefined(factor: Factor, values: ElementValues, rhs: ComplexVector): RefinedSolution {
   const { structure } = factor.analysis;
   const x = solve(factor, rhs);

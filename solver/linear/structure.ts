@@ -1,4 +1,5 @@
 /** A = Σ_e P_eᵀ A_e P_e: the pattern and the values of a complex symmetric matrix given by its elements, never assembled. */
+import { SolverError } from "../errors.ts";
 
 /** Which unknowns each element couples, and where it lies. */
 export interface ElementStructure {
@@ -17,4 +18,37 @@ export interface ElementStructure {
 export interface ElementValues {
   readonly re: Float64Array;
   readonly im: Float64Array;
+}
+
+/** Throws SolverError `structure` unless the arrays describe a matrix without empty rows. */
+export function checkStructure(structure: ElementStructure): void {
+  const { unknowns, start, ids, x, y } = structure;
+  const elements = start.length - 1;
+  if (elements < 0 || start[0] !== 0 || start[elements] !== ids.length)
+    throw fault(`start must run from 0 to the ${ids.length} ids`);
+  if (x.length !== elements || y.length !== elements)
+    throw fault(`${elements} elements need as many points, got ${x.length} and ${y.length}`);
+  const lastElement = new Int32Array(unknowns).fill(-1);
+  for (let e = 0; e < elements; e++) {
+    if (start[e + 1] < start[e]) throw fault(`start falls at element ${e}`);
+    if (!Number.isFinite(x[e] + y[e])) throw fault(`the point of element ${e} is not finite`);
+    for (let i = start[e]; i < start[e + 1]; i++) {
+      const v = ids[i];
+      if (!(v >= 0 && v < unknowns)) throw fault(`element ${e} names unknown ${v} of ${unknowns}`);
+      if (lastElement[v] === e) throw fault(`element ${e} names unknown ${v} twice`);
+      lastElement[v] = e;
+    }
+  }
+  const missing = lastElement.indexOf(-1);
+  if (missing >= 0) throw fault(`unknown ${missing} belongs to no element`);
+}
+
+/** Throws SolverError `structure` unless there are `count` values. */
+export function checkValues(values: ElementValues, count: number): void {
+  if (values.re.length !== count || values.im.length !== count)
+    throw fault(`expected ${count} values, got ${values.re.length} and ${values.im.length}`);
+}
+
+function fault(message: string): SolverError {
+  return new SolverError("structure", message);
 }

@@ -1,0 +1,127 @@
+/** A = L D Lᵀ, front by front: assemble the cells or the children's remainders, eliminate, put the remainder on a stack. */
+import { SolverError } from "../errors.ts";
+import { eliminate, type FactorNumbers, frontWorkspace, layoutOf } from "./front.ts";
+import type { ElementStructure, ElementValues } from "./structure.ts";
+import { type Fronts, triangle } from "./symbolic.ts";
+
+/** Lower triangles by columns, waiting for their parent front. */
+interface Stack {
+  readonly re: Float64Array;
+  readonly im: Float64Array;
+  top: number;
+}
+
+/** How often progress is told: in this many parts of the work. */
+const REPORTS = 50;
+
+/** Factorises; throws SolverError `singular` at a zero or non-finite pivot, and whatever onProgress throws. */
+export function factoriseFronts(
+  structure: ElementStructure,
+  valueStart: Int32Array,
+  fronts: Fronts,
+  values: ElementValues,
+  onProgress: ((fraction: number) => void) | undefined,
+): FactorNumbers {
+  const { tree, pivots, rows, entryStart, work } = fronts;
+  const count = rows.length;
+  const entries = entryStart[count];
+  const out: FactorNumbers = {
+    re: new Float64Array(entries),
+    im: new Float64Array(entries),
+    inverseRe: new Float64Array(structure.unknowns),
+    inverseIm: new Float64Array(structure.unknowns),
+  };
+  const stack: Stack = { re: new Float64Array(fronts.stack), im: new Float64Array(fronts.stack), top: 0 };
+  let space = frontWorkspace(fronts.largest);
+  let pivot = 0;
+  let told = 0;
+  for (let f = 0; f < count; f++) {
+    const n = rows[f];
+    const c = space.numbers;
+    c.fill(0, 0, 2 * layoutOf(n).imag);
+    if (tree.left[f] < 0) assembleLeaf(structure, valueStart, fronts, values, f, c);
+    else {
+      extendAdd(fronts, stack, tree.right[f], n, c);
+      extendAdd(fronts, stack, tree.left[f], n, c);
+    }
+    const bad = eliminate(space, n, pivots[f], out, entryStart[f], pivot);
+    if (bad >= 0) throw singular(fronts, pivot + bad);
+    pivot += pivots[f];
+    keepRemainder(stack, n, pivots[f], c);
+    if (onProgress !== undefined && work[f + 1] - told >= work[count] / REPORTS) {
+      told = work[f + 1];
+      onProgress(told / work[count]);
+      space = frontWorkspace(fronts.largest);
+    }
+  }
+  return out;
+}
+
+function singular(fronts: Fronts, row: number): SolverError {
+  const unknown = fronts.newNumber.indexOf(row);
+  return new SolverError("singular", `the pivot of unknown ${unknown} is zero or not finite`);
+}
+
+/** C += the matrices of leaf f's elements. */
+function assembleLeaf(
+  structure: ElementStructure,
+  valueStart: Int32Array,
+  fronts: Fronts,
+  values: ElementValues,
+  f: number,
+  c: Float64Array,
+): void {
+  const { tree, placeOfId } = fronts;
+  const { leading, imag } = layoutOf(fronts.rows[f]);
+  const { start } = structure;
+  for (let t = tree.begin[f]; t < tree.end[f]; t++) {
+    const e = tree.order[t];
+    let v = valueStart[e];
+    for (let i = start[e]; i < start[e + 1]; i++) {
+      const a = placeOfId[i];
+      for (let j = start[e]; j <= i; j++) {
+        const b = placeOfId[j];
+        const at = a > b ? b * leading + a : a * leading + b;
+        c[at] += values.re[v];
+        c[imag + at] += values.im[v];
+        v++;
+      }
+    }
+  }
+}
+
+/** C += the remainder of child g, taken from the top of the stack. */
+function extendAdd(fronts: Fronts, stack: Stack, g: number, n: number, c: Float64Array): void {
+  const { rowInParent, rowStart } = fronts;
+  const { leading, imag } = layoutOf(n);
+  const first = rowStart[g] + fronts.pivots[g];
+  const last = rowStart[g + 1];
+  const { re, im } = stack;
+  stack.top -= triangle(last - first);
+  let s = stack.top;
+  for (let j = first; j < last; j++) {
+    const column = rowInParent[j] * leading;
+    for (let i = j; i < last; i++) {
+      const at = column + rowInParent[i];
+      c[at] += re[s];
+      c[imag + at] += im[s];
+      s++;
+    }
+  }
+}
+
+/** Puts the rows beyond the pivots on the stack. */
+function keepRemainder(stack: Stack, n: number, p: number, c: Float64Array): void {
+  const { leading, imag } = layoutOf(n);
+  const { re, im } = stack;
+  let s = stack.top;
+  for (let j = p; j < n; j++) {
+    const column = j * leading;
+    for (let i = j; i < n; i++) {
+      re[s] = c[column + i];
+      im[s] = c[imag + column + i];
+      s++;
+    }
+  }
+  stack.top = s;
+}
