@@ -1,0 +1,231 @@
+/**
+ * The heat picture: a cut through coil and parts along the axis, to scale, coloured by power density, as one SVG text.
+ * The solved half stands on the right; the left is its mirror image. Pure: shapes and words in, text out.
+ */
+import type { HeatMap, Outline } from "../../meshes/heatmap.ts";
+import { heatColour } from "./colour.ts";
+import { plain } from "./figures.ts";
+import { type HeatScale, marks, position, roundStep, scaleFor } from "./heat-scale.ts";
+import { joinCells } from "./patches-of-colour.ts";
+
+/** The words of a picture. */
+export interface Caption {
+  readonly title: string;
+  /** Lines under the title: the coil, the drive, the key figures. */
+  readonly lines: readonly string[];
+  /** The thinnest skin depth among the parts, m; null when none conducts. */
+  readonly skinDepth: number | null;
+}
+
+const paper = "#fbfaf6";
+const ink = "#26221c";
+const faint = "#8a8378";
+/** Width of the picture and the box the drawing fits in, px. */
+const page = { width: 960, left: 84, boxWidth: 640, boxHeight: 620, top: 64, lineHeight: 21 };
+/** Drawing steps a pixel: positions are whole steps. */
+const fine = 10;
+/** Colours that are told apart. */
+const shades = 48;
+
+/** From metres to drawing steps, and the drawing's extent in px. */
+interface Frame {
+  /** px a metre. */
+  readonly scale: number;
+  readonly rMax: number;
+  readonly zMin: number;
+  readonly zMax: number;
+}
+
+function frameOf(outlines: readonly Outline[]): Frame {
+  let [rMax, zMin, zMax] = [1e-6, Infinity, -Infinity];
+  for (const { points } of outlines) {
+    for (const [r, z] of points) {
+      rMax = Math.max(rMax, r);
+      zMin = Math.min(zMin, z);
+      zMax = Math.max(zMax, z);
+    }
+  }
+  if (zMin > zMax) [zMin, zMax] = [-rMax, rMax];
+  const margin = 0.06 * Math.max(rMax, zMax - zMin);
+  rMax += margin;
+  zMin -= margin;
+  zMax += margin;
+  return { scale: Math.min(page.boxWidth / (2 * rMax), page.boxHeight / (zMax - zMin)), rMax, zMin, zMax };
+}
+
+/** The whole picture. */
+export function renderPicture(heat: HeatMap, caption: Caption): string {
+  const frame = frameOf(heat.outlines);
+  const scale = scaleFor(heat);
+  const top = page.top + page.lineHeight * caption.lines.length + 22;
+  const height = Math.max((frame.zMax - frame.zMin) * frame.scale, 330);
+  const notes = notesFor(scale, caption, frame);
+  const total = Math.round(top + height + 76 + 18 * notes.length);
+  const axisX = page.left + page.boxWidth / 2;
+  const middle = top + height / 2 + ((frame.zMax + frame.zMin) / 2) * frame.scale;
+  return [
+    `<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 ${page.width} ${total}" width="${page.width}" height="${total}" role="img" font-family="system-ui, 'DejaVu Sans', sans-serif" font-size="14" fill="${ink}">`,
+    `<title>${xml(caption.title)}: where the heat sits</title>`,
+    `<defs><pattern id="guide" width="6" height="6" patternUnits="userSpaceOnUse" patternTransform="rotate(45) scale(${fine})"><rect width="6" height="6" fill="#e4e0d6"/><path d="M0 0v6" stroke="${faint}" stroke-width="1.6"/></pattern></defs>`,
+    `<rect width="100%" height="100%" fill="${paper}"/>`,
+    `<text x="40" y="44" font-size="22" font-weight="600">${xml(caption.title)}</text>`,
+    ...caption.lines.map((line, k) => label(40, page.top + 8 + page.lineHeight * k, line)),
+    `<g transform="translate(${num(axisX)} ${num(middle)})">`,
+    `<g id="half">${bodies(heat.outlines, frame)}${colours(heat, scale, frame)}${edges(heat.outlines, frame)}</g>`,
+    `<use href="#half" transform="scale(-1 1)"/>`,
+    axes(frame, height, middle - top),
+    "</g>",
+    scale === null ? "" : legend(scale, top),
+    ...notes.map((note, k) => label(40, top + height + 78 + 18 * k, note, `fill="${faint}" font-size="13"`)),
+    "</svg>",
+  ]
+    .filter((line) => line !== "")
+    .join("\n")
+    .concat("\n");
+}
+
+function notesFor(scale: HeatScale | null, { skinDepth }: Caption, { scale: px }: Frame): string[] {
+  const cut =
+    "A cut along the axis, to scale; the left half mirrors the right. Copper and parts are coloured, guides hatched.";
+  if (scale === null) return [cut, "Nothing here takes heat."];
+  const how =
+    scale.kind === "log"
+      ? "Colours are logarithmic: the darkest stands for a thousandth of the brightest, and for anything below."
+      : "Colours are linear from zero.";
+  const thin =
+    skinDepth !== null && skinDepth * px < 1.5
+      ? [`The heated skin, ${plain(skinDepth * 1e3, 2)} mm deep, is thinner than a line at this scale.`]
+      : [];
+  return [cut, how, ...thin];
+}
+
+function xml(text: string): string {
+  return text
+    .replaceAll("&", "&amp;")
+    .replaceAll("<", "&lt;")
+    .replaceAll(">", "&gt;")
+    .replaceAll('"', "&quot;")
+    .replace(/[\p{Cc}\p{Cs}\u{FFFE}\u{FFFF}]/gu, " ");
+}
+
+function num(x: number): string {
+  return String(Number(x.toFixed(1)));
+}
+
+function label(x: number, y: number, text: string, attributes = ""): string {
+  return `<text x="${num(x)}" y="${num(y)}"${attributes === "" ? "" : ` ${attributes}`}>${xml(text)}</text>`;
+}
+
+/** A point in whole drawing steps, y downwards. */
+function step(r: number, z: number, frame: Frame): [number, number] {
+  const by = frame.scale * fine;
+  return [Math.round(r * by), -Math.round(z * by)];
+}
+
+const shrink = `transform="scale(${1 / fine})"`;
+
+function closedPath(points: Outline["points"], frame: Frame): string {
+  const steps = points.map(([r, z]) => step(r, z, frame).join(" "));
+  return `M${steps.join("L")}z`;
+}
+
+/** What stands behind the colours: parts grey (bores left open), guides hatched. */
+function bodies(outlines: readonly Outline[], frame: Frame): string {
+  const byBody = new Map<string, Outline[]>();
+  for (const outline of outlines) {
+    if (outline.role === "copper") continue;
+    const key = `${outline.role} ${outline.name}`;
+    byBody.set(key, [...(byBody.get(key) ?? []), outline]);
+  }
+  const paths = [...byBody.values()].map((own) => {
+    const data = own.map(({ points }) => closedPath(points, frame)).join("");
+    return `<path d="${data}" fill="${own[0]!.role === "guide" ? "url(#guide)" : "#dcd8ce"}"/>`;
+  });
+  return `<g ${shrink} fill-rule="evenodd">${paths.join("")}</g>`;
+}
+
+/** Cells by colour, neighbours of one colour joined; a hairline of the same colour closes the seams between colours. */
+function colours({ corners, density }: HeatMap, scale: HeatScale | null, frame: Frame): string {
+  if (scale === null) return "";
+  const byShade: [number, number][][][] = Array.from({ length: shades }, () => []);
+  density.forEach((value, cell) => {
+    if (value <= 0) return;
+    const shade = Math.min(shades - 1, Math.floor(shades * position(scale, value)));
+    const at = 8 * cell;
+    byShade[shade]!.push([0, 2, 4, 6].map((k) => step(corners[at + k]!, corners[at + k + 1]!, frame)));
+  });
+  const paths = byShade.map((cells, shade) => {
+    const data = joinCells(cells);
+    const colour = heatColour((shade + 0.5) / shades);
+    return data === "" ? "" : `<path d="${data}" fill="${colour}" stroke="${colour}"/>`;
+  });
+  return `<g ${shrink} stroke-width="${0.3 * fine}" stroke-linejoin="round">${paths.join("")}</g>`;
+}
+
+function edges(outlines: readonly Outline[], frame: Frame): string {
+  const data = outlines.map(({ points }) => closedPath(points, frame)).join("");
+  return `<path ${shrink} d="${data}" fill="none" stroke="${ink}" stroke-width="${0.6 * fine}"/>`;
+}
+
+/** Scales in mm below and to the left of the drawing, and the axis itself; the origin is r = 0, z = 0. */
+function axes(frame: Frame, height: number, above: number): string {
+  const { scale, rMax, zMin, zMax } = frame;
+  const left = -page.boxWidth / 2;
+  const bottom = height - above;
+  const parts: string[] = [
+    `<path d="M0 ${num(-above)}V${num(bottom)}" stroke="${faint}" stroke-dasharray="14 4 3 4" fill="none"/>`,
+  ];
+  const tick = (x: number, y: number, dx: number, dy: number, mm: number, anchor: string): string =>
+    `<path d="M${num(x)} ${num(y)}l${dx} ${dy}" stroke="${faint}"/>` +
+    label(
+      x + 1.8 * dx,
+      y + 3.2 * dy + (dy === 0 ? 4 : 3),
+      plain(mm, 4),
+      `text-anchor="${anchor}" font-size="12"`,
+    );
+  const rStep = roundStep(rMax * 1e3, Math.max(1, Math.min(5, Math.floor((rMax * scale) / 44))));
+  for (let mm = 0; mm <= rMax * 1e3; mm += rStep) {
+    const x = mm * 1e-3 * scale;
+    parts.push(tick(x, bottom, 0, 6, mm, "middle"));
+    if (mm > 0) parts.push(tick(-x, bottom, 0, 6, mm, "middle"));
+  }
+  const zStep = roundStep(
+    (zMax - zMin) * 1e3,
+    Math.max(1, Math.min(9, Math.floor(((zMax - zMin) * scale) / 24))),
+  );
+  for (let k = Math.ceil((zMin * 1e3) / zStep); k * zStep <= zMax * 1e3; k++) {
+    parts.push(tick(left, -k * zStep * 1e-3 * scale, -6, 0, k * zStep, "end"));
+  }
+  const half = num(rMax * scale);
+  parts.push(
+    `<path d="M-${half} ${num(bottom)}H${half}M${left} ${num(-zMax * scale)}V${num(-zMin * scale)}" stroke="${faint}" fill="none"/>`,
+    label(0, bottom + 42, "radius, mm", `text-anchor="middle" font-size="12" fill="${faint}"`),
+    label(left, -zMax * scale - 8, "height z, mm", `text-anchor="middle" font-size="12" fill="${faint}"`),
+  );
+  return parts.join("\n");
+}
+
+/** The colour bar at the right, in W/cm³. */
+function legend(scale: HeatScale, top: number): string {
+  const x = page.left + page.boxWidth + 44;
+  const length = 288;
+  const first = top + 30;
+  const slice = length / shades;
+  const bars = Array.from({ length: shades }, (_, k) => {
+    const y = first + length - (k + 1) * slice;
+    return `<rect x="${x}" y="${num(y)}" width="22" height="${num(slice + 0.4)}" fill="${heatColour((k + 0.5) / shades)}"/>`;
+  });
+  const ticks = marks(scale).map((density) => {
+    const y = first + length * (1 - position(scale, density));
+    return (
+      `<path d="M${x + 22} ${num(y)}h5" stroke="${faint}"/>` +
+      label(x + 32, y + 4, plain(density * 1e-6, 3), 'font-size="12"')
+    );
+  });
+  return [
+    label(x, top + 4, "power density, W/cm³"),
+    label(x, top + 20, scale.kind === "log" ? "logarithmic" : "linear", `font-size="12" fill="${faint}"`),
+    ...bars,
+    ...ticks,
+  ].join("\n");
+}

@@ -1,0 +1,103 @@
+/**
+ * The one mapper from anything thrown to what the doors say: a problem document (RFC 9457), an exit status, and words.
+ * No door formats errors itself, and no stack trace ever leaves here.
+ */
+import type { Fault } from "../meshes/refusal.ts";
+import { Refusal } from "../meshes/refusal.ts";
+
+/** An `application/problem+json` body, RFC 9457 section 3.1, with our `errors` as an extension member. */
+export interface Problem {
+  readonly type: string;
+  readonly title: string;
+  /** The HTTP status. */
+  readonly status: number;
+  readonly detail: string;
+  /** One entry a fault; empty when the document is not to blame. */
+  readonly errors: readonly Fault[];
+}
+
+/** Exit statuses of the command line (contract section 4). */
+export const exitStatus = { done: 0, failed: 1, refused: 2, shortOfAccuracy: 3 } as const;
+
+/** What went wrong, said for every door. Plain data: it crosses thread boundaries unchanged. */
+export interface Failure {
+  readonly problem: Problem;
+  readonly exit: 1 | 2;
+  /** For people, several lines, no line break at the end. */
+  readonly words: string;
+}
+
+/** An error that has already been mapped, on the other side of a thread boundary. */
+export class MappedError extends Error {
+  override readonly name = "MappedError";
+  readonly failure: Failure;
+
+  constructor(failure: Failure) {
+    super(failure.problem.detail);
+    this.failure = failure;
+  }
+}
+
+/** Errors of Node that mean "no memory left" rather than a mistake of ours. */
+const memoryCodes = new Set(["ERR_WORKER_OUT_OF_MEMORY", "ERR_MEMORY_ALLOCATION_FAILED"]);
+
+/** Maps anything thrown. */
+export function toFailure(error: unknown): Failure {
+  if (error instanceof MappedError) return error.failure;
+  if (error instanceof Refusal) return refused(error);
+  if (outOfMemory(error)) {
+    return failed(
+      "memory",
+      "Not enough memory",
+      "There is not enough memory for this design at the asked accuracy. A larger accuracyPercent needs less.",
+    );
+  }
+  if (error instanceof Error && error.name === "SolverError" && "code" in error) {
+    return failed(String(error.code), "The design could not be solved", error.message);
+  }
+  const reason = error instanceof Error ? error.message : String(error);
+  return failed(
+    "internal",
+    "Something went wrong inside emberturn",
+    `This is our fault, not the design's: ${reason}`,
+  );
+}
+
+function outOfMemory(error: unknown): boolean {
+  if (!(error instanceof Error)) return false;
+  const code = "code" in error ? String(error.code) : "";
+  return (
+    memoryCodes.has(code) ||
+    (error instanceof RangeError && /allocation failed|array length/i.test(error.message))
+  );
+}
+
+function refused(refusal: Refusal): Failure {
+  const unparsable = refusal.status === "unparsable";
+  const title = unparsable ? "The document cannot be read" : "The design cannot be solved as it stands";
+  const count = refusal.faults.length;
+  const problem = {
+    type: `urn:emberturn:problem:${refusal.status}`,
+    title,
+    status: unparsable ? 400 : 422,
+    detail: count === 1 ? refusal.faults[0]!.detail : `${count} faults, listed in errors`,
+    errors: refusal.faults,
+  };
+  return {
+    problem,
+    exit: exitStatus.refused,
+    words: [`${title}:`, ...refusal.faults.map(faultLine)].join("\n"),
+  };
+}
+
+/** One fault for people: where, what, and what would do instead. */
+function faultLine(fault: Fault): string {
+  const where = fault.pointer === "" ? "" : `${fault.pointer}: `;
+  const instead = fault.accepted === undefined ? "" : ` (accepted: ${fault.accepted})`;
+  return `  ${where}${fault.detail}${instead}`;
+}
+
+function failed(code: string, title: string, detail: string): Failure {
+  const problem = { type: `urn:emberturn:problem:${code}`, title, status: 500, detail, errors: [] };
+  return { problem, exit: exitStatus.failed, words: `${title}: ${detail}` };
+}
