@@ -31,6 +31,9 @@ const LARGE = 0.8;
 /** Rounds of refinement; each roughly doubles the number of points. */
 const ROUNDS = 14;
 const SMOOTHINGS = 3;
+const EAR_ROUNDS = 3;
+/** Cosine of the angle from which a corner between two given edges is too flat to be a corner of one face. */
+const FLAT_EAR = -0.5;
 /** Least quality (1 = rectangle, 0 = an angle of 0° or 180°) of a quadrilateral made of two triangles. */
 const LEAST_QUAD = 0.3;
 
@@ -64,6 +67,10 @@ export function fill(
     const before = x.length;
     insertCentres(net, x, y, edges, wanted);
     if (x.length === before) break;
+    net = triangulate(x, y, edges);
+  }
+  for (let round = 0; round < EAR_ROUNDS; round++) {
+    if (!openFlatEars(net, x, y, edges)) break;
     net = triangulate(x, y, edges);
   }
   for (let k = 0; k < SMOOTHINGS; k++) {
@@ -179,6 +186,38 @@ function labelTriangles(
     }
   }
   return label;
+}
+
+/**
+ * Puts a point before every flat corner whose two given edges belong to one triangle, so that the corner gets an edge of its
+ * own: on an arc the two edges are tangent there and the face would have an angle of 180°.
+ */
+function openFlatEars(net: Triangulation, x: number[], y: number[], edges: readonly FillEdge[]): boolean {
+  const { triangles, label } = net;
+  const byEnds = edgeMap(edges);
+  const given = (p: number, q: number): boolean => byEnds.has(edgeKey(p, q));
+  const old = x.length;
+  for (let e = 0; e < triangles.length; e++) {
+    if (label[Math.floor(e / 3)] < 0) continue;
+    const [b, c, a] = [triangles[e], triangles[nextHalf(e)], triangles[nextHalf(nextHalf(e))]];
+    if (!given(a, b) || !given(b, c)) continue;
+    const [ux, uy, vx, vy] = [x[a] - x[b], y[a] - y[b], x[c] - x[b], y[c] - y[b]];
+    const [lu, lv] = [Math.hypot(ux, uy), Math.hypot(vx, vy)];
+    if ((ux * vx + uy * vy) / (lu * lv) > FLAT_EAR) continue;
+    const [wx, wy] = [vx / lv - ux / lu, vy / lv - uy / lu];
+    const sign = Math.sign(ux * vy - uy * vx);
+    const reach = (0.45 * (lu + lv)) / 2 / Math.hypot(wx, wy);
+    const px = x[b] + sign * wy * reach;
+    const py = y[b] - sign * wx * reach;
+    const near = 0.3 * Math.min(lu, lv);
+    const free = x.every((_, i) => Math.abs(x[i] - px) > near || Math.abs(y[i] - py) > near);
+    const home = findTriangle(net, x, y, Math.floor(e / 3), px, py);
+    if (free && home >= 0) {
+      x.push(px);
+      y.push(py);
+    }
+  }
+  return x.length > old;
 }
 
 /** One round: circumcentres of the triangles that are too large, worst first, where they fit. */
@@ -338,7 +377,7 @@ function pairUp(net: Triangulation, x: number[], y: number[], edges: readonly Fi
     if (byEnds.has(edgeKey(p, q))) continue;
     const corners = [p, triangles[nextHalf(nextHalf(twin))], q, triangles[nextHalf(nextHalf(e))]];
     const quality = quadQuality(x, y, corners);
-    if (quality > LEAST_QUAD) pairs.push({ e, quality, corners });
+    if (quality > LEAST_QUAD && !hasFlatCorner(x, y, corners, byEnds)) pairs.push({ e, quality, corners });
   }
   pairs.sort((a, b) => b.quality - a.quality || a.e - b.e);
   const taken = new Uint8Array(label.length);
@@ -372,6 +411,22 @@ function area(x: readonly number[], y: readonly number[], corners: readonly numb
     sum += x[a] * y[b] - x[b] * y[a];
   }
   return sum / 2;
+}
+
+/** True when two given edges meet in a corner that is nearly straight. */
+function hasFlatCorner(
+  x: readonly number[],
+  y: readonly number[],
+  corners: readonly number[],
+  byEnds: ReadonlyMap<number, FillEdge>,
+): boolean {
+  return corners.some((b, i) => {
+    const a = corners[(i + 3) % 4];
+    const c = corners[(i + 1) % 4];
+    if (!byEnds.has(edgeKey(a, b)) || !byEnds.has(edgeKey(b, c))) return false;
+    const [ux, uy, vx, vy] = [x[a] - x[b], y[a] - y[b], x[c] - x[b], y[c] - y[b]];
+    return (ux * vx + uy * vy) / (Math.hypot(ux, uy) * Math.hypot(vx, vy)) < FLAT_EAR;
+  });
 }
 
 /** 1 − (largest departure from a right angle)/90°; negative when not convex. */
