@@ -50,6 +50,7 @@ async function bundle(entry) {
     platform: "node",
     format: "esm",
     target: "node20",
+    minify: true,
     legalComments: "none",
     logLevel: "silent",
     // CommonJS packages in the bundle ask for Node's own modules with require, which a module file does not have.

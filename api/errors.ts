@@ -38,6 +38,11 @@ export class MappedError extends Error {
   }
 }
 
+/** A command line that says something we do not understand. */
+export class UsageError extends Error {
+  override readonly name = "UsageError";
+}
+
 /** Errors of Node that mean "no memory left" rather than a mistake of ours. */
 const memoryCodes = new Set(["ERR_WORKER_OUT_OF_MEMORY", "ERR_MEMORY_ALLOCATION_FAILED"]);
 
@@ -45,6 +50,7 @@ const memoryCodes = new Set(["ERR_WORKER_OUT_OF_MEMORY", "ERR_MEMORY_ALLOCATION_
 export function toFailure(error: unknown): Failure {
   if (error instanceof MappedError) return error.failure;
   if (error instanceof Refusal) return refused(error);
+  if (error instanceof UsageError) return misused(error);
   if (outOfMemory(error)) {
     return failed(
       "memory",
@@ -61,6 +67,12 @@ export function toFailure(error: unknown): Failure {
     "Something went wrong inside emberturn",
     `This is our fault, not the design's: ${reason}`,
   );
+}
+
+function misused({ message }: UsageError): Failure {
+  const title = "The command line is not understood";
+  const problem = { type: "urn:emberturn:problem:usage", title, status: 400, detail: message, errors: [] };
+  return { problem, exit: exitStatus.refused, words: `${title}: ${message}\nSee emberturn --help.` };
 }
 
 function outOfMemory(error: unknown): boolean {

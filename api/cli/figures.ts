@@ -34,7 +34,8 @@ function lastPlace(value: number, bar: number): number {
   const finest = value === 0 ? -Infinity : Math.floor(Math.log10(Math.abs(value))) - mostDigits + 1;
   if (bar <= 0) return Number.isFinite(finest) ? finest : 0;
   const place = Math.floor(Math.log10(bar));
-  return Math.max(bar / 10 ** place < 3 ? place - 1 : place, finest);
+  // The allowance keeps 0.03, which division may have left a hair below, at one digit.
+  return Math.max(bar / 10 ** place < 3 - 1e-9 ? place - 1 : place, finest);
 }
 
 function atPlace(x: number, place: number): string {

@@ -14,8 +14,10 @@ export interface Dress {
 
 /** The whole table; ends with a line break. */
 export function renderTable(result: Result, { colour }: Dress): string {
-  const title = (text: string): string => (colour ? styleText("bold", text) : text);
-  const quiet = (text: string): string => (colour ? styleText("dim", text) : text);
+  const dress = (look: "bold" | "dim", text: string): string =>
+    colour ? styleText(look, text, { validateStream: false }) : text;
+  const title = (text: string): string => dress("bold", text);
+  const quiet = (text: string): string => dress("dim", text);
   const section = (heading: string, lines: readonly string[]): string[] =>
     lines.length === 0 ? [] : ["", title(heading), ...lines];
   const lines = [
@@ -102,7 +104,7 @@ function powerLines(power: Power): string[] {
   );
   const supply = columns(
     [
-      ["efficiency", figureInPercent(power.efficiency)],
+      ["efficiency", figure(power.efficiency, { factor: 0.01, symbol: "%" })],
       ["coil current", figure(power.currentA, "A")],
       ["coil voltage", figure(power.coilVoltageV, "V")],
       ["reactive power", figure(power.reactiveVar, "var")],
@@ -111,11 +113,6 @@ function powerLines(power: Power): string[] {
     ["left", "left"],
   );
   return [...split, ...supply];
-}
-
-function figureInPercent(q: Uncertain): string {
-  const { value, bar } = show(q, { factor: 0.01, symbol: "%" });
-  return `${value}${bar === "" ? "" : ` ± ${bar}`} %`;
 }
 
 /** A line a turn up to a dozen turns; beyond, ten powers a line. */

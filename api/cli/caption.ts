@@ -1,0 +1,24 @@
+/** The words of a heat picture, from a result. */
+import type { Result } from "../../meshes/result.ts";
+import { figure } from "./figures.ts";
+import type { Caption } from "./picture.ts";
+import { coilSentence, designName, driveSentence } from "./sentence.ts";
+
+/** Title, the design in a sentence, and the figures asked for first. */
+export function captionOf(result: Result): Caption {
+  const { resistanceOhm, inductanceH } = result.loaded ?? result.empty;
+  const { heatedW, efficiency } = result.power;
+  const heat =
+    heatedW.value === 0
+      ? "nothing is heated"
+      : `${figure(heatedW, "W")} into heated parts, efficiency ${figure(efficiency, { factor: 0.01, symbol: "%" })}`;
+  const skins = result.parts.flatMap((part) => (part.skinDepthMm === null ? [] : [part.skinDepthMm / 1e3]));
+  return {
+    title: designName(result.design),
+    lines: [
+      `${coilSentence(result.design)}; ${driveSentence(result.design)}`,
+      `R ${figure(resistanceOhm, "Ω")}, L ${figure(inductanceH, "H")}; ${heat}`,
+    ],
+    skinDepth: skins.length === 0 ? null : Math.min(...skins),
+  };
+}
