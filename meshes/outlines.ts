@@ -1,5 +1,5 @@
 /** What is wrong with an outline by itself: repeated points, edges folded back, no area, a boundary that meets itself. */
-import { area, boxDistance, boxOf, segmentDistance, segmentsMeet, type Xy } from "./planar.ts";
+import { area, boxDistance, boxOf, pointToSegment, segmentDistance, type Xy } from "./planar.ts";
 import { type Fault, pointerTo } from "./refusal.ts";
 import { figure } from "./words.ts";
 
@@ -17,8 +17,8 @@ export function outlineFaults(points: readonly Xy[], pointer: string): Fault[] {
   const folds = foldedCorners(points, pointer);
   if (folds.length > 0) return folds;
   const meeting = firstMeeting(points, 1e-9 * size);
-  if (meeting !== null) return [{ pointer, detail: meetingWords(points, meeting) }];
-  return Math.abs(area(points)) <= 1e-9 * size * size ? [noArea] : [];
+  if (meeting !== null) return [{ pointer, detail: meetingWords(points, meeting, 1e-9 * size) }];
+  return Math.abs(area(points)) <= 1e-9 * size * size ? [{ pointer, detail: noArea }] : [];
 }
 
 function onOneLine(points: readonly Xy[], tolerance: number): boolean {
@@ -96,24 +96,21 @@ function eachPair(
   }
 }
 
-function meetingWords(points: readonly Xy[], [i, j]: [number, number]): string {
+function meetingWords(points: readonly Xy[], [i, j]: [number, number], tolerance: number): string {
   const n = points.length;
   const at = (k: number) => points[k % n]!;
   const edge = (k: number) => `from point ${k} to ${(k + 1) % n}`;
-  const verb =
-    segmentsMeet(at(i), at(i + 1), at(j), at(j + 1)) && !touchesOnly(points, i, j) ? "crosses" : "touches";
+  const verb = touchesOnly(points, i, j, tolerance) ? "touches" : "crosses";
   const [r, z] = meetingPoint(at(i), at(i + 1), at(j), at(j + 1));
-  return `the outline ${verb} itself near [${figure(r)}, ${figure(z)}]: its edges ${edge(i)} and ${edge(j)} (points counted from 0) meet`;
+  return `the outline ${verb} itself near [${figure(r)}, ${figure(z)}]: its edges ${edge(i)} and ${edge(j)} meet (points counted from 0)`;
 }
 
 /** True when a corner lies on the other edge. */
-function touchesOnly(points: readonly Xy[], i: number, j: number): boolean {
+function touchesOnly(points: readonly Xy[], i: number, j: number, tolerance: number): boolean {
   const n = points.length;
   const at = (k: number) => points[k % n]!;
-  const on = (p: Xy, a: Xy, b: Xy) => segmentDistance(p, p, a, b) === 0;
-  return (
-    [i, i + 1].some((k) => on(at(k), at(j), at(j + 1))) || [j, j + 1].some((k) => on(at(k), at(i), at(i + 1)))
-  );
+  const on = (k: number, edge: number) => pointToSegment(at(k), at(edge), at(edge + 1)) <= tolerance;
+  return on(i, j) || on(i + 1, j) || on(j, i) || on(j + 1, i);
 }
 
 function meetingPoint(a: Xy, b: Xy, c: Xy, d: Xy): Xy {
