@@ -4,6 +4,7 @@
  * side and bore shares of what is no cylinder, skin depths and the depth shares of what does not conduct.
  */
 import { z } from "zod";
+import { DesignSchema } from "./design.ts";
 
 const finite = z.number();
 const nonNegative = z.number().min(0);
@@ -97,7 +98,7 @@ export const NumericsSchema = z.strictObject({
 
 export const ResultSchema = z.strictObject({
   /** The design as solved, defaults filled in. */
-  design: z.record(z.string(), z.unknown()),
+  design: DesignSchema,
   /** All parts taken out, guides kept. */
   empty: TerminalSchema,
   /** null when there is no part. */
