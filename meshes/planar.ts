@@ -125,14 +125,16 @@ export function polygonSeparation(a: readonly Xy[], b: readonly Xy[], tolerance:
  */
 function depthInto(a: readonly Xy[], b: readonly Xy[], tolerance: number): number {
   let deepest = 0;
+  const box = boxOf(b);
   let before = a.at(-1)!;
   for (const here of a) {
-    if (before[0] !== 0 || here[0] !== 0) {
+    const far = boxDistance(boxOf([before, here]), box) > tolerance;
+    if (!far && (before[0] !== 0 || here[0] !== 0)) {
       for (const middle of stretches(before, here, b, tolerance)) {
         deepest = Math.max(deepest, depthAt(middle, before, here, b, tolerance));
       }
     }
-    const corner = toSurface(here, b);
+    const corner = far ? 0 : toSurface(here, b);
     if (corner > Math.max(deepest, tolerance) && inside(here, b)) deepest = corner;
     before = here;
   }

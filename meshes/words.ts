@@ -202,7 +202,8 @@ function label(path: Path): string {
     const names = path.at(-3) === "curve" ? ["H", "B"] : ["r", "z"];
     return `${names[last] ?? "a third number"} of ${label(path.slice(0, -1))}`;
   }
-  return `${String(path.at(-2))} entry ${last}`;
+  const list = path.findLastIndex((k) => typeof k === "string");
+  return `${String(path[list] ?? "the list")} entry ${path.slice(list + 1).join(", ")}`;
 }
 
 const units: readonly (readonly [RegExp, string])[] = [
