@@ -2,7 +2,7 @@
 import type { Result } from "../../meshes/result.ts";
 import { figure } from "./figures.ts";
 import type { Caption } from "./picture.ts";
-import { coilSentence, designName, driveSentence } from "./sentence.ts";
+import { coilSentence, driveSentence, printable } from "./sentence.ts";
 
 /** Title, the design in a sentence, and the figures asked for first. */
 export function captionOf(result: Result): Caption {
@@ -14,9 +14,9 @@ export function captionOf(result: Result): Caption {
       : `${figure(heatedW, "W")} into heated parts, efficiency ${figure(efficiency, { factor: 0.01, symbol: "%" })}`;
   const skins = result.parts.flatMap((part) => (part.skinDepthMm === null ? [] : [part.skinDepthMm / 1e3]));
   return {
-    title: designName(result.design),
+    title: printable(result.design.name),
     lines: [
-      `${coilSentence(result.design)}; ${driveSentence(result.design)}`,
+      `${coilSentence(result.design.coil)}; ${driveSentence(result.design.drive)}`,
       `R ${figure(resistanceOhm, "Ω")}, L ${figure(inductanceH, "H")}; ${heat}`,
     ],
     skinDepth: skins.length === 0 ? null : Math.min(...skins),

@@ -1,8 +1,9 @@
 import { describe, expect, it } from "vitest";
+import type { Conductor, Winding } from "../../meshes/design.ts";
 import type { PartResult, Result, Uncertain } from "../../meshes/result.ts";
 import { captionOf } from "./caption.ts";
 import { lineWidth } from "./layout.ts";
-import { coilSentence, driveSentence } from "./sentence.ts";
+import { coilSentence, driveSentence, printable } from "./sentence.ts";
 import { renderTable } from "./table.ts";
 
 const q = (value: number, plusMinus = Math.abs(value) / 1000): Uncertain => ({ value, plusMinus });
@@ -34,6 +35,7 @@ const terminal = (r: number, l: number, x: number) => ({
 
 const result: Result = {
   design: {
+    format: "emberturn/1",
     name: "Pin-end hardening",
     coil: {
       conductor: {
@@ -45,6 +47,9 @@ const result: Result = {
       },
       winding: { form: "helix", boreDiameterMm: 50, turns: 7, pitchMm: 10.5, centreZMm: 0 },
     },
+    parts: [],
+    guides: [],
+    strayPointsMm: [],
     drive: { frequencyHz: 10000, currentA: 400 },
     accuracyPercent: 0.2,
   },
@@ -164,32 +169,41 @@ describe("the people's table", () => {
 });
 
 describe("the design in a sentence", () => {
-  const coil = (conductor: object, winding: object): string => coilSentence({ coil: { conductor, winding } });
-  const bar = { section: "rectBar", radialWidthMm: 3, axialHeightMm: 8, material: { resistivityOhmM: 2e-8 } };
+  const conductor: Conductor = {
+    section: "rectBar",
+    radialWidthMm: 3,
+    axialHeightMm: 8,
+    material: { resistivityOhmM: 2e-8 },
+    temperatureC: 20,
+  };
+  const coil = (winding: Winding, strands?: number[][]): string =>
+    coilSentence({ conductor, winding, ...(strands === undefined ? {} : { strands }) });
 
   it("knows every winding form", () => {
-    expect(coil(bar, { form: "spiral", innerDiameterMm: 30, turns: 4, pitchMm: [5, 6, 7] })).toBe(
+    expect(coil({ form: "spiral", innerDiameterMm: 30, turns: 4, pitchMm: [5, 6, 7], zMm: 0 })).toBe(
       "4 turns of rectangular bar 3 × 8 mm, flat, around a clear 30 mm at an uneven pitch",
     );
-    expect(coil(bar, { form: "layers", boreDiameterMm: 40, turnsPerLayer: 6, layers: 2, pitchMm: 9 })).toBe(
+    const layers = { form: "layers", boreDiameterMm: 40, turnsPerLayer: 6, layers: 2, pitchMm: 9 } as const;
+    expect(coil({ ...layers, layerPitchMm: 5, centreZMm: 0 })).toBe(
       "2 layers of 6 turns of rectangular bar 3 × 8 mm, on a bore of 40 mm at a pitch of 9 mm",
     );
-    expect(coil(bar, { form: "cone", boreDiameterMm: 40, topBoreDiameterMm: 60, turns: 3, pitchMm: 9 })).toBe(
-      "3 turns of rectangular bar 3 × 8 mm, on a cone of 40 mm bore below and 60 mm above at a pitch of 9 mm",
+    const cone = { form: "cone", boreDiameterMm: 40, topBoreDiameterMm: 60, turns: 3, pitchMm: 9 } as const;
+    expect(coil({ ...cone, centreZMm: 0 }, [[0, 1], [2]])).toBe(
+      "3 turns of rectangular bar 3 × 8 mm, on a cone of 40 mm bore below and 60 mm above at a pitch of 9 mm, 2 strands in parallel",
     );
-    expect(coil(bar, { form: "rings", centresMm: [[30, 0]] })).toBe("1 ring of rectangular bar 3 × 8 mm");
-    expect(coil(bar, { form: "helix", boreDiameterMm: 40, turns: 1, pitchMm: 9 })).toBe(
+    expect(coil({ form: "rings", centresMm: [[30, 0]] })).toBe("1 ring of rectangular bar 3 × 8 mm");
+    expect(coil({ form: "helix", boreDiameterMm: 40, turns: 1, pitchMm: 9, centreZMm: 0 })).toBe(
       "1 turn of rectangular bar 3 × 8 mm, on a bore of 40 mm",
     );
   });
 
   it("knows every drive", () => {
-    expect(driveSentence({ drive: { frequencyHz: 400000, partPowerW: 4000 } })).toBe(
-      "4 kW into the parts at 400 kHz",
-    );
-    expect(driveSentence({ drive: { frequencyHz: 50, coilVoltageV: 150 } })).toBe(
-      "150 V across the coil at 50 Hz",
-    );
+    expect(driveSentence({ frequencyHz: 400000, partPowerW: 4000 })).toBe("4 kW into the parts at 400 kHz");
+    expect(driveSentence({ frequencyHz: 50, coilVoltageV: 150 })).toBe("150 V across the coil at 50 Hz");
+  });
+
+  it("prints names without what a terminal would obey", () => {
+    expect(printable("pin\u001b[31m\u0007\nend ")).toBe("pin [31m end");
   });
 
   it("becomes the picture's caption with the key figures", () => {

@@ -4,7 +4,7 @@ import type { Power, Result, Terminal, Uncertain } from "../../meshes/result.ts"
 import { evenly, figure, percent, plain, plainFigure, prefixed, show } from "./figures.ts";
 import { type Alignment, columns, wrap } from "./layout.ts";
 import { partSection } from "./part-section.ts";
-import { askedPercent, coilSentence, designName, driveSentence } from "./sentence.ts";
+import { coilSentence, driveSentence, printable } from "./sentence.ts";
 
 /** How the text is to be dressed. */
 export interface Dress {
@@ -21,11 +21,11 @@ export function renderTable(result: Result, { colour }: Dress): string {
   const section = (heading: string, lines: readonly string[]): string[] =>
     lines.length === 0 ? [] : ["", title(heading), ...lines];
   const lines = [
-    title(designName(result.design)),
-    ...wrap(`${coilSentence(result.design)}; driven with ${driveSentence(result.design)}.`),
+    title(printable(result.design.name)),
+    ...wrap(`${coilSentence(result.design.coil)}; driven with ${driveSentence(result.design.drive)}.`),
     ...section("AT THE COIL'S TERMINALS", terminalLines(result.empty, result.loaded)),
     ...section("POWER AND SUPPLY", powerLines(result.power)),
-    ...result.parts.flatMap((part) => section(`PART: ${part.name}`, partSection(part))),
+    ...result.parts.flatMap((part) => section(`PART: ${printable(part.name)}`, partSection(part))),
     ...section("TURNS (power in the copper of each, W)", turnLines(result)),
     ...section("STRAY FIELD (rms)", strayLines(result)),
     ...section("COPPER AND LEADS", copperLines(result)),
@@ -164,7 +164,7 @@ function copperLines({ copper, leads }: Result): string[] {
 }
 
 function numericsLines({ numerics: n, design }: Result): string[] {
-  const asked = `${plain(askedPercent(design), 3)} %`;
+  const asked = `${plain(design.accuracyPercent, 3)} %`;
   const met = n.accuracyMet
     ? `the asked ${asked} holds`
     : `the asked ${asked} was NOT reached, so go by the ± of each figure`;
