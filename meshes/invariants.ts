@@ -15,7 +15,7 @@ export interface Inspection {
   /** Largest relative difference of a region's area and of its volume of revolution from the exact shape. */
   readonly areaError: number;
   readonly volumeError: number;
-  /** Thickest cell under a conducting surface, in skin depths or in half-thicknesses of a thinner body, whichever is less. */
+  /** Thickest cell under a conducting surface, in skin depths. */
   readonly surfaceCell: number;
   readonly patches: number;
 }
@@ -82,7 +82,7 @@ interface Measure {
   readonly volume: number;
 }
 
-/** Area (m²) and volume of revolution (m³) of every region's cells, by 4 × 4 Gauss points on the (s, z) map. */
+/** Area (m²) and volume of revolution (m³) of every region's cells, by 4 × 4 Gauss points on the (r, z) and the (s, z) map. */
 function measureRegions(grid: Grid, regions: number): Measure[] {
   const area = new Float64Array(regions);
   const volume = new Float64Array(regions);
@@ -106,7 +106,7 @@ function measureCell(grid: Grid, c: number): Measure {
       const m = mapAt(grid, c, xi, eta);
       const w = (WEIGHT[i] ?? 0) * (WEIGHT[j] ?? 0) * m.jacobian;
       volume += Math.PI * w;
-      area += w / (2 * Math.sqrt(m.s));
+      area += (WEIGHT[i] ?? 0) * (WEIGHT[j] ?? 0) * m.plane;
     });
   });
   return { area, volume };
@@ -115,23 +115,24 @@ function measureCell(grid: Grid, c: number): Measure {
 const quadratic = (x: number): [number, number, number] => [(x * (x - 1)) / 2, 1 - x * x, (x * (x + 1)) / 2];
 const slope = (x: number): [number, number, number] => [x - 0.5, -2 * x, x + 0.5];
 
-function mapAt(grid: Grid, c: number, xi: number, eta: number): { s: number; jacobian: number } {
+function mapAt(grid: Grid, c: number, xi: number, eta: number): { plane: number; jacobian: number } {
   const [n, m, dn, dm] = [quadratic(xi), quadratic(eta), slope(xi), slope(eta)];
-  let s = 0;
-  let [sx, sy, zx, zy] = [0, 0, 0, 0];
+  let [sx, sy, rx, ry, zx, zy] = [0, 0, 0, 0, 0, 0];
   for (let b = 0; b < 3; b++) {
     for (let a = 0; a < 3; a++) {
       const node = grid.cellNodes[c * 9 + a + 3 * b] ?? 0;
-      const [rr, zz] = [(grid.r[node] ?? 0) ** 2, grid.z[node] ?? 0];
+      const [r, zz] = [grid.r[node] ?? 0, grid.z[node] ?? 0];
+      const rr = r * r;
       const [na, mb, dna, dmb] = [n[a] ?? 0, m[b] ?? 0, dn[a] ?? 0, dm[b] ?? 0];
-      s += na * mb * rr;
+      rx += dna * mb * r;
+      ry += na * dmb * r;
       sx += dna * mb * rr;
       sy += na * dmb * rr;
       zx += dna * mb * zz;
       zy += na * dmb * zz;
     }
   }
-  return { s, jacobian: sx * zy - sy * zx };
+  return { plane: rx * zy - ry * zx, jacobian: sx * zy - sy * zx };
 }
 
 /** Exact area and volume of every region; entry 0 (air) is empty. */
@@ -176,7 +177,7 @@ function pieceMeasure(piece: Piece): Measure {
   return { area, volume: 2 * Math.PI * moment };
 }
 
-/** Thickest patch under a conducting surface in skin depths, or in half-widths of its region where that is thinner. */
+/** Thickest patch under a conducting surface, in skin depths. */
 function surfaceCell(scene: Scene, mesh: PatchMesh): number {
   const copper = skinDepth(scene.conductor, scene.frequency);
   const skin = [
@@ -202,10 +203,7 @@ function surfaceCell(scene: Scene, mesh: PatchMesh): number {
         isBore(scene, mesh, e, region)
       )
         continue;
-      worst = Math.max(
-        worst,
-        patchArea(mesh, p) / edgeLength(mesh, e) / Math.min(delta, thinness(scene, region)),
-      );
+      worst = Math.max(worst, patchArea(mesh, p) / edgeLength(mesh, e) / delta);
     }
   }
   return worst;
@@ -220,23 +218,6 @@ function isBore(scene: Scene, mesh: PatchMesh, e: number, region: number): boole
   const { section } = scene;
   if (section.kind === "round") return Math.hypot(dr, dz) < section.radius - section.wall / 2;
   return dr < section.width / 2 - section.wall / 2 && dz < section.height / 2 - section.wall / 2;
-}
-
-/** Half the least extent of a region: no cell need be thinner than this in skin depths to be sound. */
-function thinness(scene: Scene, region: number): number {
-  const { section } = scene;
-  if (region <= scene.turns.length) {
-    const across = section.kind === "round" ? 2 * section.radius : Math.min(section.width, section.height);
-    return section.wall > 0 ? section.wall : across / 2;
-  }
-  const pieces = scene.bodies[region - scene.turns.length - 1]?.pieces ?? [];
-  const least = pieces.map((p) => {
-    if (p.kind === "sphere") return p.radius;
-    const rs = p.points.map((q) => q[0]);
-    const zs = p.points.map((q) => q[1]);
-    return Math.min(Math.max(...rs) - Math.min(...rs), Math.max(...zs) - Math.min(...zs)) / 2;
-  });
-  return Math.min(...least);
 }
 
 function patchArea(mesh: PatchMesh, p: number): number {
