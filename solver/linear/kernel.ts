@@ -45,7 +45,7 @@ interface WasmMemory {
 }
 declare const WebAssembly: {
   Module: new (code: Uint8Array) => object;
-  Instance: new (module: object) => { readonly exports: Record<string, unknown> };
+  Instance: new (module: object) => { readonly exports: { update: UpdateKernel; memory: WasmMemory } };
 };
 
 const PAGE = 65536;
@@ -55,8 +55,7 @@ let numbers = new Float64Array(0);
 /** The kernel, with room for `count` numbers. Contents are whatever the last user left. */
 export function workspace(count: number): Workspace {
   if (instance === undefined) {
-    const { exports } = new WebAssembly.Instance(new WebAssembly.Module(moduleCode()));
-    instance = { update: exports["update"] as UpdateKernel, memory: exports["memory"] as WasmMemory };
+    instance = new WebAssembly.Instance(new WebAssembly.Module(moduleCode())).exports;
   }
   const missing = count * 8 - instance.memory.buffer.byteLength;
   if (missing > 0) instance.memory.grow(Math.ceil(missing / PAGE));

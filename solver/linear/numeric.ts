@@ -48,7 +48,7 @@ export function factoriseFronts(
     if (bad >= 0) throw singular(fronts, pivot + bad);
     pivot += pivots[f];
     keepRemainder(stack, n, pivots[f], c);
-    if (onProgress !== undefined && work[f + 1] - told >= work[count] / REPORTS) {
+    if (onProgress !== undefined && (f + 1 === count || work[f + 1] - told >= work[count] / REPORTS)) {
       told = work[f + 1];
       onProgress(told / work[count]);
       space = frontWorkspace(fronts.largest);

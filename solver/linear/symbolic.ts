@@ -164,7 +164,7 @@ class RowLists {
       const y = j < bEnd ? rowIds[j] : END;
       if (x <= y) rowInParent[i++] = top - from;
       if (y <= x) rowInParent[j++] = top - from;
-      rowIds[top++] = x < y ? x : y;
+      rowIds[top++] = Math.min(x, y);
     }
     this.close(f, top);
   }
