@@ -17,5 +17,7 @@ export interface HeatMap {
   readonly corners: Float64Array;
   /** One number a cell, its mean power density, W/m³ (rms drive); 0 where no heat arises. */
   readonly density: Float64Array;
+  /** One number a cell: the index in `outlines` of (one of) its body's outlines. */
+  readonly outline: Int32Array;
   readonly outlines: readonly Outline[];
 }
