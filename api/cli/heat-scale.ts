@@ -13,7 +13,7 @@ export interface HeatScale {
 const decades = 3;
 
 /** Volume of a ring of quadrilateral section over 2π, m³: area times its centroid's radius, by the shoelace formula. */
-function ringVolume(corners: Float64Array, cell: number): number {
+export function ringVolume(corners: Float64Array, cell: number): number {
   let sum = 0;
   for (let k = 0; k < 4; k++) {
     const i = 8 * cell + 2 * k;

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { HeatMap } from "../../meshes/heatmap.ts";
+import { powerPerHeight } from "./heat-profile.ts";
 import { marks, position, roundStep, scaleFor } from "./heat-scale.ts";
 import { joinCells } from "./patches-of-colour.ts";
 import { renderPicture } from "./picture.ts";
@@ -25,6 +26,7 @@ function block(n: number, a: number, density: (r: number, z: number) => number):
   return {
     corners: Float64Array.from(corners),
     density: Float64Array.from(values),
+    outline: new Int32Array(values.length),
     outlines: [{ role: "part", name: "block", points: square }],
   };
 }
@@ -102,6 +104,25 @@ describe("the colour scale", () => {
 
   it("is absent where nothing is heated", () => {
     expect(scaleFor(block(2, 0.02, () => 0))).toBeNull();
+  });
+});
+
+describe("the profile over the height", () => {
+  it("adds up to the parts' power, rings weighted by their radius, bins cut through cells", () => {
+    // A cylinder of radius and height a, density z: ∫ z dV = π a⁴ / 2 in all, z π a² per height.
+    const a = 0.03;
+    const heat = block(64, a, (_, z) => z);
+    const bins = powerPerHeight(heat, -0.01, 0.05, 37);
+    const height = 0.06 / 37;
+    expect(bins.reduce((sum, v) => sum + v * height, 0)).toBeCloseTo((Math.PI * a ** 4) / 2, 12);
+    expect(bins[18]! / (Math.PI * a * a * (-0.01 + 18.5 * height))).toBeCloseTo(1, 2);
+    expect(bins[0]).toBe(0);
+  });
+
+  it("leaves copper out", () => {
+    const heat = block(4, 0.03, () => 1e6);
+    const copper = { ...heat, outlines: [{ ...heat.outlines[0]!, role: "copper" as const }] };
+    expect(Math.max(...powerPerHeight(copper, 0, 0.03, 5))).toBe(0);
   });
 });
 

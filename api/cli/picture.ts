@@ -5,6 +5,7 @@
 import type { HeatMap, Outline } from "../../meshes/heatmap.ts";
 import { heatColour } from "./colour.ts";
 import { plain } from "./figures.ts";
+import { powerPerHeight } from "./heat-profile.ts";
 import { type HeatScale, marks, position, roundStep, scaleFor } from "./heat-scale.ts";
 import { joinCells } from "./patches-of-colour.ts";
 
@@ -21,9 +22,11 @@ const paper = "#fbfaf6";
 const ink = "#26221c";
 const faint = "#8a8378";
 /** Width of the picture and the box the drawing fits in, px. */
-const page = { width: 960, left: 84, boxWidth: 640, boxHeight: 620, top: 64, lineHeight: 21 };
+const page = { width: 1080, left: 84, boxWidth: 640, boxHeight: 620, top: 64, lineHeight: 21 };
 /** Drawing steps a pixel: positions are whole steps. */
 const fine = 10;
+/** Length of the longest bar of the height profile, px. */
+const profileWidth = 110;
 /** Colours that are told apart. */
 const shades = 48;
 
@@ -57,7 +60,7 @@ function frameOf(outlines: readonly Outline[]): Frame {
 export function renderPicture(heat: HeatMap, caption: Caption): string {
   const frame = frameOf(heat.outlines);
   const scale = scaleFor(heat);
-  const top = page.top + page.lineHeight * caption.lines.length + 22;
+  const top = page.top + page.lineHeight * caption.lines.length + 38;
   const height = Math.max((frame.zMax - frame.zMin) * frame.scale, 330);
   const notes = notesFor(scale, caption, frame);
   const total = Math.round(top + height + 76 + 18 * notes.length);
@@ -74,6 +77,7 @@ export function renderPicture(heat: HeatMap, caption: Caption): string {
     `<g id="half">${bodies(heat.outlines, frame)}${colours(heat, scale, frame)}${edges(heat.outlines, frame)}</g>`,
     `<use href="#half" transform="scale(-1 1)"/>`,
     axes(frame, height, middle - top),
+    profile(heat, frame),
     "</g>",
     scale === null ? "" : legend(scale, top),
     ...notes.map((note, k) => label(40, top + height + 78 + 18 * k, note, `fill="${faint}" font-size="13"`)),
@@ -205,11 +209,32 @@ function axes(frame: Frame, height: number, above: number): string {
   return parts.join("\n");
 }
 
+/** Beside the drawing, at the same heights: the parts' power per height, as a filled curve. */
+function profile(heat: HeatMap, { scale, zMin, zMax }: Frame): string {
+  const bins = Math.max(8, Math.round(((zMax - zMin) * scale) / 3));
+  const power = powerPerHeight(heat, zMin, zMax, bins);
+  const largest = Math.max(...power);
+  if (largest === 0) return "";
+  const x = page.boxWidth / 2 + 26;
+  const y = (bin: number): string => num(-(zMin + (bin / bins) * (zMax - zMin)) * scale);
+  let data = `M${x} ${y(0)}`;
+  power.forEach((value, bin) => {
+    data += `H${num(x + (profileWidth * value) / largest)}V${y(bin + 1)}`;
+  });
+  const head = -zMax * scale;
+  return [
+    `<path d="${data}H${x}z" fill="${heatColour(0.62)}" fill-opacity="0.75"/>`,
+    `<path d="M${x} ${y(0)}V${y(bins)}" stroke="${faint}"/>`,
+    label(x, head - 24, "parts' heat per height", 'font-size="12"'),
+    label(x, head - 8, `longest: ${plain(largest * 1e-2, 3)} W/cm`, `font-size="12" fill="${faint}"`),
+  ].join("\n");
+}
+
 /** The colour bar at the right, in W/cm³. */
 function legend(scale: HeatScale, top: number): string {
-  const x = page.left + page.boxWidth + 44;
+  const x = page.left + page.boxWidth + 176;
   const length = 288;
-  const first = top + 30;
+  const first = top;
   const slice = length / shades;
   const bars = Array.from({ length: shades }, (_, k) => {
     const y = first + length - (k + 1) * slice;
@@ -223,8 +248,8 @@ function legend(scale: HeatScale, top: number): string {
     );
   });
   return [
-    label(x, top + 4, "power density, W/cm³"),
-    label(x, top + 20, scale.kind === "log" ? "logarithmic" : "linear", `font-size="12" fill="${faint}"`),
+    label(x, top - 24, "power density, W/cm³", 'font-size="12"'),
+    label(x, top - 8, scale.kind === "log" ? "logarithmic" : "linear", `font-size="12" fill="${faint}"`),
     ...bars,
     ...ticks,
   ].join("\n");
