@@ -1,0 +1,129 @@
+/** Grids and materials for the tests of this folder. */
+import { cutGrid } from "../grid/cut.ts";
+import { type ArcOfEdge, makePatchMesh, tensorPatches } from "../grid/patches.ts";
+import type { Circuit, PatchMesh, RegionMaterial } from "../types.ts";
+import { type Prepared, prepare } from "./prepare.ts";
+
+export const AIR: RegionMaterial = { conductivity: 0, reluctivity: { re: 1, im: 0 }, turn: -1 };
+
+/** A part of resistivity ρ (Ω·m) and relative permeability µ. */
+export function part(resistivity: number, mu = 1): RegionMaterial {
+  return { conductivity: 1 / resistivity, reluctivity: { re: 1 / mu, im: 0 }, turn: -1 };
+}
+
+/** Copper of turn k. */
+export function copper(turn: number, resistivity = 1.75e-8): RegionMaterial {
+  return { conductivity: 1 / resistivity, reluctivity: { re: 1, im: 0 }, turn };
+}
+
+/** Series circuit, or one with the paths given. */
+export function circuit(sense: readonly number[], path: readonly number[] = sense.map(() => 0)): Circuit {
+  return { turns: sense.length, path: Int32Array.from(path), sense: Int8Array.from(sense) };
+}
+
+/** Lines from a to b whose first step is `first`, growing by `ratio` a step, ending exactly at b. */
+export function graded(a: number, b: number, first: number, ratio: number): number[] {
+  const steps: number[] = [first];
+  let sum = first;
+  while (sum < Math.abs(b - a) * (1 - 1e-9)) {
+    const step = first * ratio ** steps.length;
+    steps.push(step);
+    sum += step;
+  }
+  const lines = [a];
+  let at = 0;
+  for (const step of steps) {
+    at += step;
+    lines.push(a + ((b - a) * at) / sum);
+  }
+  lines[lines.length - 1] = b;
+  return lines;
+}
+
+/**
+ * Tensor patches over [0, r_max] × [−z_max, z_max] (z lines symmetric about 0 ends) set inside a half disc of radius R about z = 0, with
+ * `layers` rings of patches between the rectangle and the circle. The rings are region 0.
+ */
+export function openMesh(
+  rLines: readonly number[],
+  zLines: readonly number[],
+  regionAt: (r: number, z: number) => number,
+  radius: number,
+  layers: number,
+): PatchMesh {
+  const core = tensorPatches(rLines, zLines, regionAt);
+  const nr = rLines.length;
+  const nz = zLines.length;
+  const rim: number[] = [];
+  for (let i = 0; i < nr; i++) rim.push(i);
+  for (let j = 1; j < nz; j++) rim.push(j * nr + nr - 1);
+  for (let i = nr - 2; i >= 0; i--) rim.push((nz - 1) * nr + i);
+  const r = Array.from(core.r);
+  const z = Array.from(core.z);
+  const corners = Array.from(core.corners);
+  const region = Array.from(core.region);
+  const arcs: ArcOfEdge[] = [];
+  let inner = rim;
+  for (let k = 1; k <= layers; k++) {
+    const blend = k / layers;
+    const outer = rim.map((node, i) => {
+      const angle = Math.atan2(core.z[node], core.r[node]);
+      const onAxis = i === 0 || i === rim.length - 1;
+      r.push(onAxis ? 0 : (1 - blend) * core.r[node] + blend * radius * Math.cos(angle));
+      z.push((1 - blend) * core.z[node] + blend * radius * Math.sin(angle));
+      return r.length - 1;
+    });
+    for (let i = 0; i + 1 < rim.length; i++) {
+      corners.push(inner[i], outer[i], outer[i + 1], inner[i + 1]);
+      region.push(0);
+      if (k === layers) arcs.push({ a: outer[i], b: outer[i + 1], centreR: 0, centreZ: 0, radius });
+    }
+    inner = outer;
+  }
+  return makePatchMesh(
+    Float64Array.from(r),
+    Float64Array.from(z),
+    Int32Array.from(corners),
+    Int32Array.from(region),
+    arcs,
+    { centreZ: 0, radius },
+  );
+}
+
+/** Level n of a mesh, prepared; turns by region. */
+export function prepared(mesh: PatchMesh, n: number, turnOfRegion: readonly number[]): Prepared {
+  return prepare(cutGrid(mesh, n), turnOfRegion);
+}
+
+/**
+ * A small coil of square solid turns (side 2h about r = a, z = z_k) over a solid part of radius b, height 2c: region 0 air,
+ * 1 the part, 2 … the turns. Lines follow every surface with two thin cells on the copper's inside.
+ */
+export function coilMesh(scale = 1, mirrored = false, radius = 0.16): PatchMesh {
+  const sign = mirrored ? -1 : 1;
+  const turnZ = COIL_Z.map((z) => z * sign);
+  const { a, h, b, c } = COIL;
+  const rLines = [0, b / 2, 0.85 * b, b, (a - h + b) / 2, a - h, a - h / 2, a, a + h / 2, a + h, 0.05];
+  const zSet = new Set<number>([-0.06, -c, c, 0.06, -0.8 * c, 0.8 * c]);
+  for (const z of turnZ) for (const f of [-1, -0.5, 0, 0.5, 1]) zSet.add(Number((z + f * h).toFixed(9)));
+  const zLines = [...zSet].sort((x, y) => x - y);
+  const regionAt = (r: number, z: number): number => {
+    if (r < b * scale && Math.abs(z) < c * scale) return 1;
+    const k = turnZ.findIndex((t) => Math.abs(z - t * scale) < h * scale);
+    return k >= 0 && Math.abs(r - a * scale) < h * scale ? 2 + k : 0;
+  };
+  const scaled = (lines: readonly number[]): number[] => lines.map((x) => x * scale);
+  return openMesh(scaled(rLines), scaled(zLines), regionAt, radius * scale, 3);
+}
+
+/** Dimensions of `coilMesh`, m. */
+export const COIL = { a: 0.03, h: 0.003, b: 0.015, c: 0.025 } as const;
+/** Heights of its turns: unevenly spaced. */
+export const COIL_Z = [-0.012, 0, 0.016] as const;
+/** Turn by region of `coilMesh`. */
+export const COIL_TURNS = [-1, -1, 0, 1, 2] as const;
+
+/** Materials of `coilMesh` with its part. */
+export function coilMaterials(resistivity = 2.5e-7, mu = 20): RegionMaterial[] {
+  return [AIR, part(resistivity, mu), copper(0), copper(1), copper(2)];
+}
