@@ -1,5 +1,6 @@
 /** Who may import whom. One way only: solver <- meshes; solver, meshes <- validation; solver, meshes <- api <- viewer. */
-const test = "\\.test\\.ts$";
+/** Tests, and what only tests read. */
+const test = "(\\.test|/fixtures|/drafts)\\.ts$";
 
 /** @type {import("dependency-cruiser").IConfiguration} */
 module.exports = {
