@@ -238,7 +238,7 @@ const outlineFields = {
 };
 
 function checkBore(c: { diameterMm: number; boreDiameterMm: number }, context: z.core.$RefinementCtx): void {
-  if (c.boreDiameterMm < c.diameterMm) return;
+  if (c.boreDiameterMm === 0 || c.boreDiameterMm < c.diameterMm) return;
   const detail = `a bore of ${c.boreDiameterMm} mm leaves nothing of a diameter of ${c.diameterMm} mm`;
   fault(context, ["boreDiameterMm"], detail, `below ${c.diameterMm}`);
 }

@@ -1,7 +1,7 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { readDesign } from "./check.ts";
-import { plainDesign } from "./fixtures.ts";
+import { plainDesign } from "./drafts.ts";
 import { readJson, textLimits } from "./json.ts";
 import { Refusal } from "./refusal.ts";
 

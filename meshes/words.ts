@@ -26,8 +26,8 @@ export function faultsFromIssues(issues: readonly Issue[], root: unknown): Fault
     // The schema library also compares whole numbers with what a double can count to; our own limit says it better.
     if (issue.code === "too_big" && issue.maximum === Number.MAX_SAFE_INTEGER) continue;
     for (const found of fromIssue(issue, root, [])) {
-      // A value can fail two rules at once (not whole, too large); one sentence is enough, but custom words always count.
-      if (issue.code !== "custom" && pointers.has(found.pointer)) continue;
+      // A value can fail two rules at once (not whole, too large); one sentence is enough.
+      if (pointers.has(found.pointer)) continue;
       pointers.add(found.pointer);
       faults.push(found);
     }
