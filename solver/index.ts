@@ -1,10 +1,15 @@
 /** The solver's public surface: other folders import only this. */
 export { MU0 } from "./constants.ts";
+export { type CellSamples, heatSampler } from "./field/density.ts";
+export { makeProbe, type PointField } from "./field/evaluate.ts";
 export { type CellIntegrals, integrateCells } from "./field/integrals.ts";
+export { type Locator, makeLocator, type Place } from "./field/locate.ts";
 export { type Losses, lossesOf, powerBalance } from "./field/losses.ts";
+export { type HotSpot, quantileDensity, sharesBelow, sliceShares } from "./field/observe.ts";
 export { type CoilSolution, type Prepared, prepare, type Solution, type Tick } from "./field/prepare.ts";
 export { solveState } from "./field/solve.ts";
 export { type Linkage, solveApplied, solvePrescribed, type Winding } from "./field/sources.ts";
+export { type SurfaceField, surfaceField } from "./field/surface.ts";
 export type { FieldState } from "./field/system.ts";
 export { countNodes, cutGrid } from "./grid/cut.ts";
 export { type ArcOfEdge, makePatchMesh, tensorPatches } from "./grid/patches.ts";

@@ -1,5 +1,4 @@
 import { describe, expect, it } from "vitest";
-import { MU0 } from "../constants.ts";
 import { COIL_TURNS, circuit, coilMaterials, coilMesh, prepared } from "./fixtures.ts";
 import { lossesOf, powerBalance } from "./losses.ts";
 import { solveState } from "./solve.ts";

@@ -1,0 +1,101 @@
+/**
+ * The field at any point of space.
+ *
+ * Inside the outer circle: B_r = −ψ_z/r, B_z = 2ψ_s by the shape functions of the cell that holds the point; on the axis B_r = 0.
+ * Outside: the poles of multipoles.ts, plus the applied uniform field where there is one.
+ */
+import { SolverError } from "../errors.ts";
+import type { Complex } from "../types.ts";
+import { type Locator, makeLocator, type Place } from "./locate.ts";
+import { fieldOfPoles, type Multipoles, multipolesOf } from "./multipoles.ts";
+import type { Solution } from "./prepare.ts";
+import { emptyTable, NODES, shapeAt } from "./shape.ts";
+
+/** The field at a point, rms phasors. */
+export interface PointField {
+  /** T. */
+  readonly br: Complex;
+  readonly bz: Complex;
+  /** Wb/rad. */
+  readonly psi: Complex;
+  /** Cell that holds the point, −1 outside the outer circle. */
+  readonly cell: number;
+}
+
+/** A point this near below the outer circle may lie in no cell (chords against arc); the poles serve there too. */
+const RIM = 0.98;
+/** On the axis inside a cell that touches it with a corner only, the field is read at this part of its width. */
+const OFF_AXIS = 0.05;
+
+/** Reads a solution at points (r ≥ 0, z), m. Throws SolverError `outside` beyond a grid that has no open space. */
+export function makeProbe(
+  solution: Solution,
+  locator: Locator = makeLocator(solution.prepared),
+): (r: number, z: number) => PointField {
+  const { exterior } = solution.prepared.grid;
+  let poles: Multipoles | null | undefined;
+  const outside = (r: number, z: number): PointField => {
+    if (poles === undefined) poles = multipolesOf(solution);
+    if (poles === null) throw new SolverError("outside", `(${r}, ${z}) m lies outside the grid`);
+    const field = fieldOfPoles(poles, r, z);
+    const uniform = solution.applied;
+    return {
+      br: field.br,
+      bz: { re: field.bz.re + uniform, im: field.bz.im },
+      psi: { re: field.psi.re + (uniform * r * r) / 2, im: field.psi.im },
+      cell: -1,
+    };
+  };
+  return (r, z) => {
+    const rho = exterior === null ? 0 : Math.hypot(r, z - exterior.centreZ) / exterior.radius;
+    if (rho >= 1) return outside(r, z);
+    const place = locator(r, z);
+    if (place !== null) return readPlace(solution, locator, place, r, z);
+    if (rho >= RIM || exterior === null) return outside(r, z);
+    throw new SolverError("outside", `(${r}, ${z}) m lies in no cell`);
+  };
+}
+
+const SHAPE = emptyTable(1);
+
+function readPlace(solution: Solution, locator: Locator, place: Place, r: number, z: number): PointField {
+  const { grid, integrals } = solution.prepared;
+  const { cell } = place;
+  if (r === 0 && integrals.kind[cell] === 0) {
+    let width = 0;
+    for (let i = 0; i < NODES; i++) width = Math.max(width, grid.r[grid.cellNodes[cell * NODES + i]]);
+    const beside = locator(OFF_AXIS * width, z);
+    if (beside === null) throw new SolverError("outside", `(${r}, ${z}) m lies in no cell`);
+    const field = readPlace(solution, locator, beside, OFF_AXIS * width, z);
+    return { br: { re: 0, im: 0 }, bz: field.bz, psi: { re: 0, im: 0 }, cell };
+  }
+  shapeAt(integrals.kind[cell], place.xi, place.eta, SHAPE);
+  let [sXi, sEta, zXi, zEta] = [0, 0, 0, 0];
+  const re = [0, 0, 0];
+  const im = [0, 0, 0];
+  for (let i = 0; i < NODES; i++) {
+    const node = grid.cellNodes[cell * NODES + i];
+    const [n, a, b] = [SHAPE.n[i], SHAPE.dXi[i], SHAPE.dEta[i]];
+    const s = grid.r[node] ** 2;
+    sXi += a * s;
+    sEta += b * s;
+    zXi += a * grid.z[node];
+    zEta += b * grid.z[node];
+    const [x, y] = [solution.psi.re[node], solution.psi.im[node]];
+    re[0] += n * x;
+    re[1] += a * x;
+    re[2] += b * x;
+    im[0] += n * y;
+    im[1] += a * y;
+    im[2] += b * y;
+  }
+  const det = sXi * zEta - sEta * zXi;
+  const bz = ([, a, b]: number[]): number => (2 * (a * zEta - b * zXi)) / det;
+  const br = ([, a, b]: number[]): number => (r === 0 ? 0 : -(b * sXi - a * sEta) / (det * r));
+  return {
+    br: { re: br(re), im: br(im) },
+    bz: { re: bz(re), im: bz(im) },
+    psi: { re: re[0], im: im[0] },
+    cell,
+  };
+}

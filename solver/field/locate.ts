@@ -1,0 +1,129 @@
+/**
+ * Finds the cell and the (ξ, η) of a place: boxes of cells sorted into square buckets, then Newton's iteration on the cell's own map
+ * (s, z)(ξ, η) = Σ N_i (s_i, z_i).
+ */
+import type { Prepared } from "./prepare.ts";
+import { emptyTable, NODES, shapeAt } from "./shape.ts";
+
+/** A place inside a cell. */
+export interface Place {
+  readonly cell: number;
+  readonly xi: number;
+  readonly eta: number;
+}
+
+/** Finds places in cells inside the outer circle; null where there is none. r, z in m. */
+export type Locator = (r: number, z: number) => Place | null;
+
+/** Boxes grow by this part of their size, so that bulging edges and rounding lose no point. */
+const GROWTH = 0.05;
+const STEPS = 40;
+/** A place counts as found this near to it in (ξ, η); as inside a cell this far beyond its edges. */
+const EXACT = 1e-12;
+const INSIDE = 1e-9;
+/** Beyond the edges of all candidates, the nearest still serves up to here: arcs and their neighbours' chords differ that much. */
+const TOLERATED = 0.02;
+
+/** Builds the buckets of a grid; one locator serves all solutions on it. */
+export function makeLocator(prepared: Prepared): Locator {
+  const { grid, integrals } = prepared;
+  const cells = grid.cellRegion.length;
+  const box = new Float64Array(cells * 4);
+  const whole = [Infinity, Infinity, -Infinity, -Infinity];
+  for (let c = 0; c < cells; c++) boxOf(grid.r, grid.z, grid.cellNodes, c, box, whole);
+  const side = Math.max(1, Math.ceil(Math.sqrt(cells)));
+  const column = (r: number): number => bucket(r, whole[0], whole[2], side);
+  const row = (z: number): number => bucket(z, whole[1], whole[3], side);
+  const buckets = new Map<number, number[]>();
+  for (let c = 0; c < cells; c++) {
+    for (let j = row(box[4 * c + 1]); j <= row(box[4 * c + 3]); j++) {
+      for (let i = column(box[4 * c]); i <= column(box[4 * c + 2]); i++) {
+        const list = buckets.get(j * side + i);
+        if (list === undefined) buckets.set(j * side + i, [c]);
+        else list.push(c);
+      }
+    }
+  }
+  return (r, z) => {
+    let best: Place | null = null;
+    let least = TOLERATED;
+    for (const c of buckets.get(row(z) * side + column(r)) ?? []) {
+      if (r < box[4 * c] || r > box[4 * c + 2] || z < box[4 * c + 1] || z > box[4 * c + 3]) continue;
+      const place = invert(grid.r, grid.z, grid.cellNodes, integrals.kind[c], c, r * r, z);
+      const beyond = Math.max(Math.abs(place.xi), Math.abs(place.eta)) - 1;
+      if (beyond <= INSIDE) return place;
+      if (beyond < least) {
+        least = beyond;
+        best = place;
+      }
+    }
+    return best;
+  };
+}
+
+function bucket(x: number, from: number, to: number, side: number): number {
+  return Math.min(side - 1, Math.max(0, Math.floor(((x - from) / (to - from)) * side)));
+}
+
+/** Box of cell c, and of all so far. */
+function boxOf(
+  r: Float64Array,
+  z: Float64Array,
+  nodes: Int32Array,
+  c: number,
+  box: Float64Array,
+  whole: number[],
+): void {
+  let [r0, z0, r1, z1] = [Infinity, Infinity, -Infinity, -Infinity];
+  for (let i = 0; i < NODES; i++) {
+    const node = nodes[c * NODES + i];
+    r0 = Math.min(r0, r[node]);
+    r1 = Math.max(r1, r[node]);
+    z0 = Math.min(z0, z[node]);
+    z1 = Math.max(z1, z[node]);
+  }
+  const grow = GROWTH * (r1 - r0 + z1 - z0);
+  box.set([r0 - grow, z0 - grow, r1 + grow, z1 + grow], 4 * c);
+  whole[0] = Math.min(whole[0], r0);
+  whole[1] = Math.min(whole[1], z0);
+  whole[2] = Math.max(whole[2], r1);
+  whole[3] = Math.max(whole[3], z1);
+}
+
+const SHAPE = emptyTable(1);
+
+/** (ξ, η) of (s, z) on a cell's map, continued beyond its edges; far off where Newton's iteration finds none. */
+function invert(
+  r: Float64Array,
+  z: Float64Array,
+  nodes: Int32Array,
+  kind: number,
+  cell: number,
+  s: number,
+  height: number,
+): Place {
+  let xi = 0;
+  let eta = 0;
+  for (let step = 0; step < STEPS; step++) {
+    shapeAt(kind, xi, eta, SHAPE);
+    let [es, ez, sXi, sEta, zXi, zEta] = [-s, -height, 0, 0, 0, 0];
+    for (let i = 0; i < NODES; i++) {
+      const node = nodes[cell * NODES + i];
+      const si = r[node] * r[node];
+      es += SHAPE.n[i] * si;
+      ez += SHAPE.n[i] * z[node];
+      sXi += SHAPE.dXi[i] * si;
+      sEta += SHAPE.dEta[i] * si;
+      zXi += SHAPE.dXi[i] * z[node];
+      zEta += SHAPE.dEta[i] * z[node];
+    }
+    const det = sXi * zEta - sEta * zXi;
+    if (!(Math.abs(det) > 0)) break;
+    const dXi = (es * zEta - ez * sEta) / det;
+    const dEta = (ez * sXi - es * zXi) / det;
+    xi = Math.min(2, Math.max(-2, xi - dXi));
+    eta = Math.min(2, Math.max(-2, eta - dEta));
+    if (Math.abs(dXi) + Math.abs(dEta) < EXACT) break;
+  }
+  return { cell, xi, eta };
+}
