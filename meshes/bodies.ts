@@ -77,7 +77,7 @@ function edgeFaults(solid: Extract<Solid, { shape: "outline" }>, pointer: string
       });
     }
   });
-  const neck = narrowestNeck(points, scale.finest);
+  const neck = faults.length > 0 ? null : narrowestNeck(points, scale.finest);
   if (neck !== null) {
     const what = `a neck or slot between the edges after points ${neck.edges[0]} and ${neck.edges[1]}`;
     faults.push(tooFine(list, what, neck.distance, scale));

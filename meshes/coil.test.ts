@@ -216,6 +216,12 @@ describe("strands", () => {
       /no turn 7/,
       /0 to 6/,
     ],
+    [
+      "strands of a coil beyond all bounds",
+      (d) => Object.assign(d.coil, { strands: [[0]], winding: { ...d.coil.winding, turns: 1e9 } }),
+      "/coil/winding/turns",
+      /at most 1000/,
+    ],
     ["an empty strand", strands([[0, 1, 2, 3, 4, 5, 6], []]), "/coil/strands/1", /0 entries/],
     [
       "a fraction of a turn",

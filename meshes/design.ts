@@ -74,6 +74,9 @@ export const ConductorSchema = z.discriminatedUnion("section", [
 
 // Winding
 
+/** Rules that join several keys run also where one of them is out of bounds by itself, which is told already. */
+const countable = (n: number): boolean => Number.isInteger(n) && n >= 1 && n <= limits.turns;
+
 /** A pitch is wanted wherever there is a step, and a list has one entry a step. */
 function checkPitch(
   pitch: number | readonly number[] | undefined,
@@ -81,6 +84,7 @@ function checkPitch(
   key: string,
   context: z.core.$RefinementCtx,
 ): void {
+  if (!countable(steps + 1)) return;
   if (pitch === undefined && steps > 0) {
     fault(context, [key], `${key} is missing`, "one number of mm, centre to centre");
   } else if (Array.isArray(pitch) && pitch.length !== steps) {
@@ -135,7 +139,7 @@ const layers = z
     checkPitch(w.pitchMm, w.turnsPerLayer - 1, "pitchMm", context);
     checkPitch(w.layerPitchMm, w.layers - 1, "layerPitchMm", context);
     const total = w.layers * w.turnsPerLayer;
-    if (total <= limits.turns) return;
+    if (total <= limits.turns || !countable(w.layers) || !countable(w.turnsPerLayer)) return;
     const detail = `${w.layers} layers of ${w.turnsPerLayer} turns are ${total} turns; at most ${limits.turns} are solved`;
     fault(context, ["layers"], detail, `at most ${Math.floor(limits.turns / w.turnsPerLayer)}`);
   });
@@ -172,6 +176,7 @@ function checkStrands(
   turns: number,
   context: z.core.$RefinementCtx,
 ): void {
+  if (!countable(turns)) return;
   const seenIn = new Map<number, number>();
   strands.forEach((strand, s) => {
     strand.forEach((turn, i) => {

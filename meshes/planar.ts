@@ -93,8 +93,9 @@ export interface Separation {
 export function polygonSeparation(a: readonly Xy[], b: readonly Xy[], tolerance: number): Separation {
   const depth = Math.max(depthInto(a, b, tolerance), depthInto(b, a, tolerance));
   if (depth > 0) {
-    // Figures whose boundaries run together everywhere show no depth of their own: take the room their boxes share.
-    const overlap = depth > 2 * tolerance ? depth : Math.min(...sharedExtent(a, b));
+    // Upright rectangles overlap by the room they share; so do figures whose boundaries run together everywhere, for want of depth.
+    const upright = isUpright(a) && isUpright(b);
+    const overlap = upright || depth <= 2 * tolerance ? Math.min(...sharedExtent(a, b)) : depth;
     return { overlap, gap: 0, nearMiss: Infinity };
   }
   let gap = Infinity;
@@ -192,6 +193,13 @@ function depthAt(middle: Xy, p: Xy, q: Xy, b: readonly Xy[], tolerance: number):
 function parallel(p: Xy, q: Xy, c: Xy, d: Xy): boolean {
   const [ur, uz, vr, vz] = [q[0] - p[0], q[1] - p[1], d[0] - c[0], d[1] - c[1]];
   return Math.abs(ur * vz - uz * vr) <= 1e-6 * Math.hypot(ur, uz) * Math.hypot(vr, vz);
+}
+
+function isUpright(points: readonly Xy[]): boolean {
+  const { left, right, low, high } = boxOf(points);
+  return (
+    points.length === 4 && points.every(([r, z]) => (r === left || r === right) && (z === low || z === high))
+  );
 }
 
 function sharedExtent(a: readonly Xy[], b: readonly Xy[]): [number, number] {
