@@ -2,12 +2,13 @@
  * Shapes and domain → patches: sides sampled by the wanted sizes, layers inside conductors, the rest filled, every face cut
  * into quadrilaterals at the middles of its edges. What comes out wrong anywhere is tried again with smaller cells there.
  */
-import { type ArcOfEdge, cutGrid, makePatchMesh, type PatchMesh } from "../../solver/index.ts";
+import { type ArcOfEdge, cutGrid, type Grid, makePatchMesh, type PatchMesh } from "../../solver/index.ts";
 import { type FillEdge, FillError, fill } from "./fill.ts";
 import { type Layers, makeLayers } from "./layers.ts";
 import { AIR, type Arc, type Domain, OUTSIDE, type RegionTraits, type Shape } from "./shape.ts";
 import { makePlane, type Plane } from "./sides.ts";
 import { makeSizing, type Sizing, sampleSide } from "./sizes.ts";
+import type { Places } from "./thickness.ts";
 
 export interface MeshInput {
   readonly shapes: readonly Shape[];
@@ -21,27 +22,36 @@ export interface MeshInput {
 /** No valid grid was found: a defect of the generator, not of the input. */
 export class MeshError extends Error {}
 
-const ATTEMPTS = 9;
+const ATTEMPTS = 12;
 
 /** The patches of the whole domain. */
 export function makeMesh(input: MeshInput): PatchMesh {
   const extra: [number, number, number][] = [];
+  const thin: Places[] = [];
   for (let attempt = 0; attempt < ATTEMPTS; attempt++) {
     try {
-      const mesh = tryMesh(input, extra);
+      const mesh = tryMesh(input, extra, thin, attempt < ATTEMPTS / 2);
+      if (mesh === null) continue;
       const bad = badPatches(mesh);
       if (bad.length === 0)
         return input.domain.kind === "open" && input.domain.mirror ? reflect(mesh, input) : mesh;
-      for (const [r, z, size] of bad) extra.push([r, z, size / 3]);
+      for (const { r, z, size } of bad) extra.push([r, z, size / 3]);
+      thin.push(bad.filter((b) => Number.isFinite(input.traits[b.region]?.skinDepth)).map((b) => [b.r, b.z]));
     } catch (error) {
       if (!(error instanceof FillError)) throw error;
-      extra.push([error.x, error.y, 0.02 / 2 ** attempt]);
+      thin.push([[error.x, error.y]]);
     }
   }
   throw new MeshError("no valid grid for this geometry");
 }
 
-function tryMesh(input: MeshInput, extra: readonly (readonly [number, number, number])[]): PatchMesh {
+/** One try; null when the layers ask for smaller cells first (now in `extra`), which is heeded at first. */
+function tryMesh(
+  input: MeshInput,
+  extra: [number, number, number][],
+  thin: readonly Places[],
+  heed: boolean,
+): PatchMesh | null {
   const { shapes, traits, domain } = input;
   const plane = makePlane(shapes, domain);
   const sizing = makeSizing(plane, shapes, traits, extra);
@@ -55,7 +65,12 @@ function tryMesh(input: MeshInput, extra: readonly (readonly [number, number, nu
     const inner = innerOf.get(index);
     if (inner !== undefined) sideNodes[inner] = placeNodes(plane, inner, params);
   });
-  const layers = makeLayers(plane, sideNodes, traits, (outer) => innerOf.get(outer) ?? null);
+  const layers = makeLayers(plane, sideNodes, traits, (outer) => innerOf.get(outer) ?? null, thin);
+  const unmet = layers.demands.filter(([r, z, size]) => sizing.field.at(r, z) > 1.3 * size);
+  if (heed && unmet.length > 0) {
+    for (const [r, z, size] of unmet) extra.push([r, z, size]);
+    return null;
+  }
   plane.sides.forEach((side, index) => {
     if (side.kind === "edge") sideNodes[index] = sampleEdge(plane, index, sizing, layers, traits);
   });
@@ -265,10 +280,20 @@ function compact(
 /** Least sine of a corner's angle, in a patch cut in two, for it to count as sound. */
 const LEAST_SINE = 1e-3;
 
-/** Middle and size of every patch with a corner that is turned over or flat once cut. */
-function badPatches(mesh: PatchMesh): [number, number, number][] {
-  const grid = cutGrid(mesh, 2);
-  const bad: [number, number, number][] = [];
+interface BadCell {
+  readonly r: number;
+  readonly z: number;
+  readonly size: number;
+  readonly region: number;
+}
+
+/** Every cell with a corner that is turned over or flat once cut. */
+function badPatches(mesh: PatchMesh): BadCell[] {
+  return [1, 2].flatMap((level) => badCells(cutGrid(mesh, level)));
+}
+
+function badCells(grid: Grid): BadCell[] {
+  const bad: BadCell[] = [];
   const quad = new Int32Array(4);
   for (let c = 0; c < grid.cellRegion.length; c++) {
     let sound = true;
@@ -293,7 +318,12 @@ function badPatches(mesh: PatchMesh): [number, number, number][] {
       const a = grid.cellNodes[c * 9];
       const b = grid.cellNodes[c * 9 + 8];
       const middle = grid.cellNodes[c * 9 + 4];
-      bad.push([grid.r[middle], grid.z[middle], Math.hypot(grid.r[a] - grid.r[b], grid.z[a] - grid.z[b])]);
+      bad.push({
+        r: grid.r[middle],
+        z: grid.z[middle],
+        size: Math.hypot(grid.r[a] - grid.r[b], grid.z[a] - grid.z[b]),
+        region: grid.cellRegion[c],
+      });
     }
   }
   return bad;
