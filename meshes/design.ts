@@ -170,7 +170,13 @@ export function turnCount(w: Winding): number {
 
 const LeadsSchema = z.strictObject({ lengthMm, spacingMm: lengthMm });
 
-/** Each turn in exactly one strand. */
+function strandFault(turn: number, turns: number, before: number | undefined): string | undefined {
+  if (turn >= turns) return `there is no turn ${turn}: turns are counted from 0 to ${turns - 1}`;
+  if (before === undefined) return undefined;
+  return `turn ${turn} is in strand ${before} already; each turn belongs to one strand`;
+}
+
+/** Each turn in exactly one strand; a document beyond help is not told every fault. */
 function checkStrands(
   strands: readonly (readonly number[])[],
   turns: number,
@@ -178,27 +184,15 @@ function checkStrands(
 ): void {
   if (!countable(turns)) return;
   const seenIn = new Map<number, number>();
-  strands.forEach((strand, s) => {
-    strand.forEach((turn, i) => {
-      const path = ["strands", s, i];
-      if (turn >= turns) {
-        fault(
-          context,
-          path,
-          `there is no turn ${turn}: turns are counted from 0 to ${turns - 1}`,
-          `0 to ${turns - 1}`,
-        );
-      } else if (seenIn.has(turn)) {
-        fault(
-          context,
-          path,
-          `turn ${turn} is in strand ${seenIn.get(turn)} already; each turn belongs to one strand`,
-        );
-      } else {
-        seenIn.set(turn, s);
-      }
-    });
-  });
+  let told = 0;
+  for (const [s, strand] of strands.entries()) {
+    for (const [i, turn] of strand.entries()) {
+      const detail = strandFault(turn, turns, seenIn.get(turn));
+      if (detail === undefined) seenIn.set(turn, s);
+      else fault(context, ["strands", s, i], detail, `each of 0 to ${turns - 1} once`);
+      if (detail !== undefined && ++told === 50) return;
+    }
+  }
   const missing = Array.from({ length: turns }, (_, k) => k).filter((k) => !seenIn.has(k));
   if (missing.length === 0) return;
   const shown = missing.slice(0, 12).join(", ") + (missing.length > 12 ? ", …" : "");
@@ -206,7 +200,7 @@ function checkStrands(
   fault(context, ["strands"], detail, "every turn once");
 }
 
-export const CoilSchema = z
+const CoilSchema = z
   .strictObject({
     conductor: ConductorSchema,
     winding: WindingSchema,
@@ -249,7 +243,7 @@ function checkBore(c: { diameterMm: number; boreDiameterMm: number }, context: z
 }
 
 /** What a stack repeats. */
-export const SolidSchema = z.discriminatedUnion("shape", [
+const SolidSchema = z.discriminatedUnion("shape", [
   z.strictObject(cylinderFields).superRefine(checkBore),
   z.strictObject(sphereFields),
   z.strictObject(outlineFields),
@@ -294,7 +288,7 @@ export const GuideSchema = z.discriminatedUnion("shape", [
 
 const drivers = ["currentA", "partPowerW", "coilVoltageV"] as const;
 
-export const DriveSchema = z
+const DriveSchema = z
   .strictObject({
     frequencyHz: z.number().min(1).max(1e7),
     currentA: z.number().min(1e-6).max(1e7).optional(),

@@ -27,7 +27,7 @@ export interface Layout {
 }
 
 /** A turn's section as a figure. */
-export function turnFigure(turn: { readonly r: number; readonly z: number }, section: SectionMm): Figure {
+function turnFigure(turn: { readonly r: number; readonly z: number }, section: SectionMm): Figure {
   if (section.kind === "round") return { kind: "disc", r: turn.r, z: turn.z, radius: section.radialMm / 2 };
   const [w, h] = [section.radialMm / 2, section.axialMm / 2];
   const { r, z } = turn;

@@ -10,10 +10,10 @@ const finite = z.number();
 const nonNegative = z.number().min(0);
 
 /** A computed scalar: the truth of the stated model lies within value ± plusMinus. */
-export const UncertainSchema = z.strictObject({ value: finite, plusMinus: nonNegative });
+const UncertainSchema = z.strictObject({ value: finite, plusMinus: nonNegative });
 
 /** The coil's terminal values in one state (leads included); reactance and q at the drive's frequency. */
-export const TerminalSchema = z.strictObject({
+const TerminalSchema = z.strictObject({
   resistanceOhm: UncertainSchema,
   inductanceH: UncertainSchema,
   reactanceOhm: UncertainSchema,
@@ -21,7 +21,7 @@ export const TerminalSchema = z.strictObject({
 });
 
 /** Powers and drive in the loaded state (the empty one when there is no part). */
-export const PowerSchema = z.strictObject({
+const PowerSchema = z.strictObject({
   totalW: UncertainSchema,
   /** Copper of the coil and of its leads. */
   coilW: UncertainSchema,
@@ -39,15 +39,15 @@ export const PowerSchema = z.strictObject({
   resonantCapacitanceF: UncertainSchema,
 });
 
-export const TurnResultSchema = z.strictObject({ rMm: finite, zMm: finite, powerW: finite });
+const TurnResultSchema = z.strictObject({ rMm: finite, zMm: finite, powerW: finite });
 
 /** Share of a part's power within a depth of its nearest surface. */
-export const DepthShareSchema = z.strictObject({ depthMm: nonNegative, share: finite });
+const DepthShareSchema = z.strictObject({ depthMm: nonNegative, share: finite });
 
 const pointMm = z.tuple([finite, finite]);
 const depthShares = z.array(DepthShareSchema);
 
-export const PartResultSchema = z.strictObject({
+const PartResultSchema = z.strictObject({
   name: z.string(),
   powerW: UncertainSchema,
   /** null when it does not conduct; its surface's value when it saturates. */
@@ -70,19 +70,19 @@ export const PartResultSchema = z.strictObject({
   boreDepthShares: depthShares.nullable(),
 });
 
-export const StrayFieldSchema = z.strictObject({ rMm: finite, zMm: finite, fluxDensityT: UncertainSchema });
+const StrayFieldSchema = z.strictObject({ rMm: finite, zMm: finite, fluxDensityT: UncertainSchema });
 
 /** The pair of leads, skin and proximity effect included; already inside empty, loaded and coilW. */
-export const LeadsResultSchema = z.strictObject({ resistanceOhm: nonNegative, inductanceH: nonNegative });
+const LeadsResultSchema = z.strictObject({ resistanceOhm: nonNegative, inductanceH: nonNegative });
 
 /** For cutting the copper; the helix's surplus over closed rings is added to nothing else. */
-export const CopperSchema = z.strictObject({
+const CopperSchema = z.strictObject({
   lengthMm: nonNegative,
   helixExtraOhm: finite,
   helixExtraH: finite,
 });
 
-export const NumericsSchema = z.strictObject({
+const NumericsSchema = z.strictObject({
   /** Of the finest grid. */
   unknowns: nonNegative,
   grids: nonNegative,

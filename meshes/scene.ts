@@ -41,7 +41,7 @@ export interface Body {
   readonly heated: boolean;
   readonly pieces: readonly Piece[];
   readonly material: SceneMaterial;
-  /** True when the document calls it a cylinder (depth shares from side and bore are defined). */
+  /** True for a cylinder or a stack of cylinders: depth shares from side and bore are defined. */
   readonly cylinder: boolean;
 }
 

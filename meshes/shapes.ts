@@ -67,7 +67,7 @@ export function isCylinder(body: Part | Guide): boolean {
 }
 
 /** Height of a solid along z, mm. */
-export function heightOf(solid: Solid): number {
+function heightOf(solid: Solid): number {
   if (solid.shape === "cylinder") return solid.lengthMm;
   if (solid.shape === "sphere") return solid.diameterMm;
   const z = solid.pointsMm.map((p) => p[1]);

@@ -56,7 +56,7 @@ function fromIssue(issue: Issue, root: unknown, base: Path): Fault[] {
   const one = (detail: string, accepted?: string): Fault[] => [make(path, detail, accepted)];
   switch (issue.code) {
     case "unrecognized_keys":
-      return issue.keys.map((key) => unknownKey([...path, key], key, issue.message.split(",")));
+      return unknownKeys(path, issue.keys, issue.message.split(","));
     case "invalid_union":
       return fromUnion(issue, root, path);
     case "invalid_type":
@@ -114,6 +114,11 @@ const elsewhere: Readonly<Record<string, string>> = {
   leads: "leads belong to the coil, beside conductor and winding",
   wallMm: "a bar is solid and has no wall; roundTube and rectTube have one",
 };
+
+/** Hints are looked for as long as the faults are listed at all. */
+function unknownKeys(path: Path, keys: readonly string[], known: readonly string[]): Fault[] {
+  return keys.map((key, i) => unknownKey([...path, key], key, i < MOST_FAULTS ? known : []));
+}
 
 function unknownKey(path: Path, key: string, known: readonly string[]): Fault {
   const near = nearest(key, known);
