@@ -1,12 +1,13 @@
 /**
  * Elements → a binary tree whose halves share few unknowns (nested dissection of the elements).
+ * George, SIAM J. Numer. Anal. 10 (1973) 345 (from memory).
  *
- * Elements and unknowns form a hypergraph: an unknown is a net over its elements, and a cut's size is the number of nets
- * with elements on both sides. Each set of elements is swept along several directions, every cut position counted;
- * the best one is smoothed by single moves (Fiduccia & Mattheyses, Proc. 19th Design Automation Conf. (1982) 175, from
- * memory). George, SIAM J. Numer. Anal. 10 (1973) 345 (from memory) for the dissection itself.
+ * Each set of elements is swept along several directions and the edges between neighbours are counted at every cut
+ * position; the best cut is then smoothed by single moves. A set's graph is copied into its halves' (two buffers
+ * in turn), renumbered along x, so that the work stays in cache and cut edges are gone.
  */
-import { balancedCost, type Nets, Refinement } from "./moves.ts";
+import { balancedCost, Mover, type SubGraph } from "./moves.ts";
+import { type Graph, neighboursOf } from "./neighbours.ts";
 import type { ElementStructure } from "./structure.ts";
 
 /** A binary tree over the elements; nodes in postorder, the root last. */
@@ -23,193 +24,200 @@ export interface Tree {
 
 /** Sets this small are not split: a dense front of a few cells is cheaper than more fronts. */
 const LEAF = 4;
-/** Cut positions tried lie between this share of the elements and the rest. */
-const EDGE_SHARE = 0.3;
-/** How much a cut may grow to be balanced: cost = cut (1 + PENALTY (2t/n − 1)²). */
-const PENALTY = 1;
-/** Directions of sweep: angles iπ/SWEEPS in the (x, y) plane. */
-const SWEEPS = 4;
 /** Sets below this size are not worth smoothing. */
-const SMOOTH_FROM = 12;
+const SMOOTH_FROM = 16;
+/** A half holds at least this share of its set. */
+const LEAST_SHARE = 0.3;
+/** Directions of sweep: angles dπ/SWEEPS in the (x, y) plane. */
+const SWEEPS = 4;
+
+/** The sets of one depth, each on positions lo … hi in ascending x. */
+interface Level extends SubGraph {
+  readonly element: Int32Array;
+  /** Positions of each set in ascending order along directions 1, 2, …; direction 0 is the position itself. */
+  readonly lists: readonly Int32Array[];
+}
 
 /** Splits the elements down to leaves. */
 export function dissect(structure: ElementStructure): Tree {
-  const count = structure.start.length - 1;
-  const nets = netsOf(structure);
-  const lists = sweepLists(structure, count);
-  const work = {
-    nets,
-    lists,
-    spare: new Int32Array(count),
-    size: new Int32Array(structure.unknowns),
-    left: new Int32Array(structure.unknowns),
-    moves: new Refinement(nets, new Uint8Array(count)),
-  };
-  const tree = { begin: [] as number[], end: [] as number[], left: [] as number[], right: [] as number[] };
-  const split = (lo: number, hi: number): number => {
+  return new Dissection(structure).run();
+}
+
+class Dissection {
+  private readonly order: Int32Array;
+  private readonly levels: readonly [Level, Level];
+  private readonly mover: Mover;
+  /** Per position: when a sweep met it; where it goes in the next level. */
+  private readonly met: Int32Array;
+  private readonly target: Int32Array;
+  private sweeps = 0;
+  private readonly begin: number[] = [];
+  private readonly end: number[] = [];
+  private readonly left: number[] = [];
+  private readonly right: number[] = [];
+
+  constructor(structure: ElementStructure) {
+    const count = structure.start.length - 1;
+    const graph = neighboursOf(structure);
+    this.order = new Int32Array(count);
+    this.levels = [emptyLevel(count, graph.list.length), emptyLevel(count, graph.list.length)];
+    this.mover = new Mover(count);
+    this.met = new Int32Array(count);
+    this.target = new Int32Array(count);
+    this.fillFirst(structure, graph);
+  }
+
+  run(): Tree {
+    this.split(0, 0, this.order.length);
+    const { order, begin, end, left, right } = this;
+    const [b, e, l, r] = [begin, end, left, right].map((list) => Int32Array.from(list));
+    return { order, begin: b, end: e, left: l, right: r };
+  }
+
+  /** Splits the set on positions lo … hi of the level at `depth`; returns its tree node. */
+  private split(depth: number, lo: number, hi: number): number {
+    const level = this.levels[depth & 1];
     let a = -1;
     let b = -1;
     if (hi - lo > LEAF) {
-      const middle = bisect(work, lo, hi);
-      a = split(lo, middle);
-      b = split(middle, hi);
+      const middle = lo + this.bisect(level, lo, hi);
+      this.descend(level, this.levels[(depth + 1) & 1], lo, middle, hi);
+      a = this.split(depth + 1, lo, middle);
+      b = this.split(depth + 1, middle, hi);
+    } else for (let i = lo; i < hi; i++) this.order[i] = level.element[i];
+    this.begin.push(lo);
+    this.end.push(hi);
+    this.left.push(a);
+    return this.right.push(b) - 1;
+  }
+
+  /** Chooses the halves: sets side[lo … hi) and returns the size of the first. */
+  private bisect(level: Level, lo: number, hi: number): number {
+    const { side } = this.mover;
+    const n = hi - lo;
+    const least = Math.max(1, Math.floor(n * LEAST_SHARE));
+    let best = this.sweep(level, 0, lo, hi, least);
+    let direction = 0;
+    for (let d = 1; d < SWEEPS; d++) {
+      const found = this.sweep(level, d, lo, hi, least);
+      if (found.cost >= best.cost) continue;
+      best = found;
+      direction = d;
     }
-    tree.left.push(a);
-    tree.right.push(b);
-    tree.begin.push(lo);
-    return tree.end.push(hi) - 1;
-  };
-  split(0, count);
-  return {
-    order: lists[0],
-    begin: Int32Array.from(tree.begin),
-    end: Int32Array.from(tree.end),
-    left: Int32Array.from(tree.left),
-    right: Int32Array.from(tree.right),
-  };
-}
+    const list = level.lists[direction];
+    for (let i = lo; i < hi; i++) side[list[i]] = i - lo < best.size ? 0 : 1;
+    return n < SMOOTH_FROM ? best.size : this.mover.improve(level, lo, hi, best.size, least);
+  }
 
-interface Work {
-  readonly nets: Nets;
-  /** The elements sorted along each direction; the same range of all lists holds the same set. */
-  readonly lists: readonly Int32Array[];
-  readonly spare: Int32Array;
-  /** Per net: its elements within the set; and those a sweep has yet to meet. */
-  readonly size: Int32Array;
-  readonly left: Int32Array;
-  readonly moves: Refinement;
-}
-
-/** Unknowns of two or more elements, by element and by unknown. */
-function netsOf(structure: ElementStructure): Nets {
-  const { start, ids, unknowns } = structure;
-  const count = start.length - 1;
-  const degree = new Int32Array(unknowns);
-  for (let i = 0; i < ids.length; i++) degree[ids[i]]++;
-  const netStart = new Int32Array(unknowns + 1);
-  for (let v = 0; v < unknowns; v++) netStart[v + 1] = netStart[v] + (degree[v] > 1 ? degree[v] : 0);
-  const fill = netStart.slice(0, unknowns);
-  const netElements = new Int32Array(netStart[unknowns]);
-  const elementStart = new Int32Array(count + 1);
-  const elementNets = new Int32Array(netStart[unknowns]);
-  let top = 0;
-  for (let e = 0; e < count; e++) {
-    for (let i = start[e]; i < start[e + 1]; i++) {
-      const v = ids[i];
-      if (degree[v] < 2) continue;
-      elementNets[top++] = v;
-      netElements[fill[v]++] = e;
+  /** The cheapest cut across direction d. */
+  private sweep(
+    level: Level,
+    d: number,
+    lo: number,
+    hi: number,
+    least: number,
+  ): { cost: number; size: number } {
+    const { met } = this;
+    const { from, to, adjacent } = level;
+    const list = level.lists[d];
+    const n = hi - lo;
+    const stamp = ++this.sweeps;
+    let cut = 0;
+    let cost = Infinity;
+    let size = least;
+    for (let t = 1; t <= n - least; t++) {
+      const i = list[lo + t - 1];
+      met[i] = stamp;
+      for (let k = from[i]; k < to[i]; k++) cut += met[adjacent[k]] === stamp ? -1 : 1;
+      if (t < least) continue;
+      const c = balancedCost(cut, t, n);
+      if (c >= cost) continue;
+      cost = c;
+      size = t;
     }
-    elementStart[e + 1] = top;
+    return { cost, size };
   }
-  return { elementStart, elementNets, netStart, netElements };
-}
 
-/** The elements sorted along each direction. Sorted as numbers (27 bits of position, then the element) for speed. */
-function sweepLists(structure: ElementStructure, count: number): Int32Array[] {
-  const { x, y } = structure;
-  const lists: Int32Array[] = [];
-  const key = new Float64Array(count);
-  for (let d = 0; d < SWEEPS; d++) {
-    const cx = Math.cos((d * Math.PI) / SWEEPS);
-    const cy = Math.sin((d * Math.PI) / SWEEPS);
-    let low = Infinity;
-    let high = -Infinity;
-    for (let e = 0; e < count; e++) {
-      key[e] = cx * x[e] + cy * y[e];
-      if (key[e] < low) low = key[e];
-      if (key[e] > high) high = key[e];
-    }
-    const scale = high > low ? (2 ** 27 - 1) / (high - low) : 0;
-    for (let e = 0; e < count; e++) key[e] = Math.floor((key[e] - low) * scale) * 2 ** 25 + e;
-    key.sort();
-    lists.push(Int32Array.from(key, (k) => k % 2 ** 25));
-  }
-  return lists;
-}
-
-/** Splits the set lists[·][lo … hi) in two; returns where the second begins. */
-function bisect(work: Work, lo: number, hi: number): number {
-  const { lists, moves } = work;
-  const { side } = moves;
-  countNets(work, lo, hi);
-  let best = Infinity;
-  let bestList = lists[0];
-  let middle = (lo + hi) >> 1;
-  for (const list of lists) {
-    const { cost, at } = sweep(work, list, lo, hi);
-    if (cost < best) {
-      best = cost;
-      bestList = list;
-      middle = at;
-    }
-  }
-  for (let i = lo; i < hi; i++) side[bestList[i]] = i < middle ? 0 : 1;
-  if (hi - lo >= SMOOTH_FROM)
-    middle = lo + moves.refine(bestList, lo, hi, middle - lo, least(hi - lo), PENALTY);
-  for (const list of lists) partition(list, side, lo, hi, work.spare);
-  return middle;
-}
-
-/** size[v] = left[v] = elements of net v within the set. */
-function countNets(work: Work, lo: number, hi: number): void {
-  const { size, left, lists } = work;
-  const { elementStart, elementNets } = work.nets;
-  const list = lists[0];
-  for (let i = lo; i < hi; i++) {
-    const e = list[i];
-    for (let k = elementStart[e]; k < elementStart[e + 1]; k++) size[elementNets[k]] = 0;
-  }
-  for (let i = lo; i < hi; i++) {
-    const e = list[i];
-    for (let k = elementStart[e]; k < elementStart[e + 1]; k++) left[elementNets[k]] = ++size[elementNets[k]];
-  }
-}
-
-/** The cheapest cut position along one list: the first half is list[lo … at). */
-function sweep(work: Work, list: Int32Array, lo: number, hi: number): { cost: number; at: number } {
-  const { size, left } = work;
-  const { elementStart, elementNets } = work.nets;
-  const n = hi - lo;
-  const from = lo + least(n);
-  const to = hi - least(n);
-  let open = 0;
-  let cost = Infinity;
-  let at = from;
-  for (let i = lo; i < hi; i++) {
-    const e = list[i];
-    for (let k = elementStart[e]; k < elementStart[e + 1]; k++) {
-      const v = elementNets[k];
-      if (left[v] === size[v]) open++;
-      if (--left[v] === 0) {
-        open--;
-        left[v] = size[v];
+  /** Copies the two halves of a set from one level to the next, without the edges between them. */
+  private descend(level: Level, next: Level, lo: number, middle: number, hi: number): void {
+    const { target } = this;
+    const { side } = this.mover;
+    let a = lo;
+    let b = middle;
+    for (let i = lo; i < hi; i++) target[i] = side[i] === 0 ? a++ : b++;
+    for (let d = 0; d < SWEEPS; d++) {
+      const list = level.lists[d];
+      const copy = next.lists[d];
+      a = lo;
+      b = middle;
+      for (let i = lo; i < hi; i++) {
+        const j = list[i];
+        if (side[j] === 0) copy[a++] = target[j];
+        else copy[b++] = target[j];
       }
     }
-    const t = i + 1;
-    if (t < from || t > to) continue;
-    const c = balancedCost(open, t - lo, n, PENALTY);
-    if (c < cost) {
-      cost = c;
-      at = t;
+    this.copyEdges(level, next, lo, hi);
+  }
+
+  private copyEdges(level: Level, next: Level, lo: number, hi: number): void {
+    const { target } = this;
+    const { side } = this.mover;
+    for (let i = lo; i < hi; i++) {
+      const j = target[i];
+      next.element[j] = level.element[i];
+      let top = level.from[i];
+      next.from[j] = top;
+      for (let k = level.from[i]; k < level.to[i]; k++) {
+        const other = level.adjacent[k];
+        if (side[other] === side[i]) next.adjacent[top++] = target[other];
+      }
+      next.to[j] = top;
     }
   }
-  return { cost, at };
-}
 
-/** Fewest elements of a half. */
-function least(n: number): number {
-  return Math.max(1, Math.floor(n * EDGE_SHARE));
-}
-
-/** Moves side 0 before side 1, keeping the order within each. */
-function partition(list: Int32Array, side: Uint8Array, lo: number, hi: number, spare: Int32Array): void {
-  let a = lo;
-  let b = 0;
-  for (let i = lo; i < hi; i++) {
-    const e = list[i];
-    if (side[e] === 0) list[a++] = e;
-    else spare[b++] = e;
+  /** Level 0: all elements, one set. */
+  private fillFirst(structure: ElementStructure, graph: Graph): void {
+    const level = this.levels[0];
+    const { element, from, to, adjacent, lists } = level;
+    const { target } = this;
+    const count = element.length;
+    sortAlong(structure, 0, element);
+    for (let i = 0; i < count; i++) target[element[i]] = i;
+    for (let d = 0; d < SWEEPS; d++) {
+      const list = lists[d];
+      sortAlong(structure, d, list);
+      for (let i = 0; i < count; i++) list[i] = target[list[i]];
+    }
+    for (let i = 0; i < count; i++) {
+      from[i] = graph.start[element[i]];
+      to[i] = graph.start[element[i] + 1];
+      for (let k = from[i]; k < to[i]; k++) adjacent[k] = target[graph.list[k]];
+    }
   }
-  for (let i = 0; i < b; i++) list[a + i] = spare[i];
+}
+
+function emptyLevel(count: number, edges: number): Level {
+  const ints = (): Int32Array => new Int32Array(count);
+  const lists = Array.from({ length: SWEEPS }, ints);
+  return { element: ints(), from: ints(), to: ints(), adjacent: new Int32Array(edges), lists };
+}
+
+/** The elements in ascending order along direction d. Sorted as numbers (27 bits of position, then the element), which is fast. */
+function sortAlong(structure: ElementStructure, d: number, out: Int32Array): void {
+  const { x, y } = structure;
+  const count = out.length;
+  const cx = Math.cos((d * Math.PI) / SWEEPS);
+  const cy = Math.sin((d * Math.PI) / SWEEPS);
+  const key = new Float64Array(count);
+  let low = Infinity;
+  let high = -Infinity;
+  for (let e = 0; e < count; e++) {
+    key[e] = cx * x[e] + cy * y[e];
+    low = Math.min(low, key[e]);
+    high = Math.max(high, key[e]);
+  }
+  const scale = high > low ? (2 ** 27 - 1) / (high - low) : 0;
+  for (let e = 0; e < count; e++) key[e] = Math.floor((key[e] - low) * scale) * 2 ** 25 + e;
+  key.sort();
+  for (let i = 0; i < count; i++) out[i] = key[i] % 2 ** 25;
 }
