@@ -1,5 +1,5 @@
 /** Text → design → scene, with every fault on the way told at once. */
-import type { z } from "zod";
+import type * as z from "zod";
 import { cornersOf, MOST_CORNERS, shapeFaults } from "./bodies.ts";
 import { clearanceFaults } from "./clearances.ts";
 import {

@@ -1,5 +1,5 @@
 import { describe, expect, test } from "vitest";
-import { z } from "zod";
+import * as z from "zod";
 import { checkDesign } from "./check.ts";
 import { DesignSchema } from "./design.ts";
 import { faultsOf, faultsOfDocument, plainDesign, refuses, varied } from "./drafts.ts";

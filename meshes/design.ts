@@ -3,7 +3,7 @@
  * Every object is strict, so an unknown key is a fault; `z.infer` gives the completed document, defaults filled in.
  * What the schema cannot know (copper that touches, parts that overlap) is checked in check.ts.
  */
-import { z } from "zod";
+import * as z from "zod";
 import { materials } from "../solver/index.ts";
 import {
   ConductorMaterialSchema,

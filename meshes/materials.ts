@@ -1,5 +1,5 @@
 /** Schemas of materials in the design document: a library id, or an inline material. */
-import { z } from "zod";
+import * as z from "zod";
 import { MU0, materialIds, materials } from "../solver/index.ts";
 import { celsiusFromKelvin } from "./units.ts";
 

@@ -3,7 +3,7 @@
  * `null` stands for what has no meaning in the design at hand: `loaded` without a part, `leads` where the design has none,
  * side and bore shares of what is no cylinder, skin depths and the depth shares of what does not conduct.
  */
-import { z } from "zod";
+import * as z from "zod";
 import { DesignSchema } from "./design.ts";
 
 const finite = z.number();

@@ -1,5 +1,5 @@
 /** The one place where the schema library's findings become words a coil winder understands. */
-import type { z } from "zod";
+import type * as z from "zod";
 import { type Fault, pointerTo } from "./refusal.ts";
 
 type Issue = z.core.$ZodIssue;
