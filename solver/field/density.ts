@@ -6,9 +6,10 @@
  * at the middles of m × m equal pieces of a cell's (ξ, η) square, each with its volume π ds dz.
  */
 import { MU0 } from "../constants.ts";
+import { type CellTables, innerTables } from "./axis.ts";
 import { gather } from "./cellforms.ts";
 import type { Solution } from "./prepare.ts";
-import { NODES, type ShapeTable, tablesAt } from "./shape.ts";
+import { NODES, type ShapeTable } from "./shape.ts";
 import { reluctivityOf } from "./system.ts";
 
 /** Pieces of one cell, row by row (ξ fastest). Buffers are reused: valid until the next cell is asked for. */
@@ -25,9 +26,9 @@ export interface CellSamples {
 
 /** Reads m × m pieces of a cell inside the outer circle. */
 export function heatSampler(solution: Solution, m: number): (cell: number) => CellSamples {
-  const { grid, integrals, system } = solution.prepared;
-  const middles = tablesAt(...lattice(m, m, 1 / m - 1));
-  const corners = tablesAt(...lattice(m, m + 1, -1));
+  const { grid, system } = solution.prepared;
+  const middles = innerTables(grid, ...lattice(m, m, 1 / m - 1));
+  const corners = innerTables(grid, ...lattice(m, m + 1, -1));
   const out = emptySamples(m);
   const s = new Float64Array(NODES);
   const z = new Float64Array(NODES);
@@ -47,8 +48,8 @@ export function heatSampler(solution: Solution, m: number): (cell: number) => Ce
     reluctivityOf(solution, region, cell, nu);
     const joule = solution.omega ** 2 * solution.materials[region].conductivity;
     const lag = (solution.omega * nu[1]) / MU0;
-    readMiddles(middles(integrals.kind[cell]), s, z, re, im, joule, lag, 4 / (m * m), out);
-    readCorners(corners(integrals.kind[cell]), s, z, out);
+    readMiddles(middles(cell), s, z, re, im, joule, lag, 4 / (m * m), out);
+    readCorners(corners(cell).geometry, s, z, out);
     return out;
   };
 }
@@ -81,7 +82,7 @@ function emptySamples(m: number): CellSamples {
 
 /** Flat arguments and one loop: runs for every sample of a part. */
 function readMiddles(
-  table: ShapeTable,
+  tables: CellTables,
   s: Float64Array,
   z: Float64Array,
   re: Float64Array,
@@ -91,7 +92,8 @@ function readMiddles(
   weight: number,
   out: CellSamples,
 ): void {
-  const { n, dXi, dEta } = table;
+  const { n, dXi, dEta } = tables.geometry;
+  const { field } = tables;
   for (let p = 0; p < out.r.length; p++) {
     let [sp, zp, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0, 0];
     let [x, y, xXi, xEta, yXi, yEta] = [0, 0, 0, 0, 0, 0];
@@ -105,12 +107,15 @@ function readMiddles(
       sEta += b * s[i];
       zXi += a * z[i];
       zEta += b * z[i];
-      x += N * re[i];
-      y += N * im[i];
-      xXi += a * re[i];
-      xEta += b * re[i];
-      yXi += a * im[i];
-      yEta += b * im[i];
+      const F = field.n[p * NODES + i];
+      const fXi = field.dXi[p * NODES + i];
+      const fEta = field.dEta[p * NODES + i];
+      x += F * re[i];
+      y += F * im[i];
+      xXi += fXi * re[i];
+      xEta += fEta * re[i];
+      yXi += fXi * im[i];
+      yEta += fEta * im[i];
     }
     const det = sXi * zEta - sEta * zXi;
     out.r[p] = Math.sqrt(sp);

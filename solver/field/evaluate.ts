@@ -6,6 +6,7 @@
  */
 import { SolverError } from "../errors.ts";
 import type { Complex } from "../types.ts";
+import { fieldAt } from "./axis.ts";
 import { type Locator, makeLocator, type Place } from "./locate.ts";
 import { fieldOfPoles, type Multipoles, multipolesOf } from "./multipoles.ts";
 import type { Solution } from "./prepare.ts";
@@ -24,8 +25,8 @@ export interface PointField {
 
 /** A point this near below the outer circle may lie in no cell (chords against arc); the poles serve there too. */
 const RIM = 0.98;
-/** On the axis inside a cell that touches it with a corner only, the field is read at this part of its width. */
-const OFF_AXIS = 0.05;
+/** Fields on the axis are read this far from it in (ξ, η), where the map is regular. */
+const OFF_AXIS = 1e-4;
 
 /** Reads a solution at points (r ≥ 0, z), m. Throws SolverError `outside` beyond a grid that has no open space. */
 export function makeProbe(
@@ -50,37 +51,37 @@ export function makeProbe(
     const rho = exterior === null ? 0 : Math.hypot(r, z - exterior.centreZ) / exterior.radius;
     if (rho >= 1) return outside(r, z);
     const place = locator(r, z);
-    if (place !== null) return readPlace(solution, locator, place, r, z);
+    if (place !== null) return readPlace(solution, place, r);
     if (rho >= RIM || exterior === null) return outside(r, z);
     throw new SolverError("outside", `(${r}, ${z}) m lies in no cell`);
   };
 }
 
-const SHAPE = emptyTable(1);
+const MAP = emptyTable(1);
+const FIELD = emptyTable(1);
 
-function readPlace(solution: Solution, locator: Locator, place: Place, r: number, z: number): PointField {
+function readPlace(solution: Solution, place: Place, r: number): PointField {
   const { grid, integrals } = solution.prepared;
   const { cell } = place;
-  if (r === 0 && integrals.kind[cell] === 0) {
-    let width = 0;
-    for (let i = 0; i < NODES; i++) width = Math.max(width, grid.r[grid.cellNodes[cell * NODES + i]]);
-    const beside = locator(OFF_AXIS * width, z);
-    if (beside === null) throw new SolverError("outside", `(${r}, ${z}) m lies in no cell`);
-    const field = readPlace(solution, locator, beside, OFF_AXIS * width, z);
-    return { br: { re: 0, im: 0 }, bz: field.bz, psi: { re: 0, im: 0 }, cell };
-  }
-  shapeAt(integrals.kind[cell], place.xi, place.eta, SHAPE);
+  const kind = integrals.kind[cell];
+  const touch = integrals.touch[cell];
+  const least = touch === 0 ? 1 : 1 - OFF_AXIS;
+  const xi = Math.min(least, Math.max(-least, place.xi));
+  const eta = Math.min(least, Math.max(-least, place.eta));
+  const s = new Float64Array(NODES);
+  for (let i = 0; i < NODES; i++) s[i] = grid.r[grid.cellNodes[cell * NODES + i]] ** 2;
+  shapeAt(kind, xi, eta, MAP);
+  fieldAt(kind, touch, s, xi, eta, FIELD);
   let [sXi, sEta, zXi, zEta] = [0, 0, 0, 0];
   const re = [0, 0, 0];
   const im = [0, 0, 0];
   for (let i = 0; i < NODES; i++) {
     const node = grid.cellNodes[cell * NODES + i];
-    const [n, a, b] = [SHAPE.n[i], SHAPE.dXi[i], SHAPE.dEta[i]];
-    const s = grid.r[node] ** 2;
-    sXi += a * s;
-    sEta += b * s;
-    zXi += a * grid.z[node];
-    zEta += b * grid.z[node];
+    sXi += MAP.dXi[i] * s[i];
+    sEta += MAP.dEta[i] * s[i];
+    zXi += MAP.dXi[i] * grid.z[node];
+    zEta += MAP.dEta[i] * grid.z[node];
+    const [n, a, b] = [FIELD.n[i], FIELD.dXi[i], FIELD.dEta[i]];
     const [x, y] = [solution.psi.re[node], solution.psi.im[node]];
     re[0] += n * x;
     re[1] += a * x;

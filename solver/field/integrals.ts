@@ -5,11 +5,11 @@
  *
  * and outside the outer circle K_ij = (1/R) ∫ [t² ∂_tN_i ∂_tN_j/(1−c²) + ∂_cN_i ∂_cN_j] dt dc, the same form after t = R/ρ, c = cos θ
  * (weak form: head of ../types.ts; the mapping of open space: Freeman & Lowther, IEEE Trans. Magn. 25 (1989) 2810, from memory).
- * Gauss points never lie on the axis, at c = ±1 or at t = 0. Functions of nodes on the axis belong to no unknown; what is written
- * for them is finite and of no use.
+ * Gauss points never lie on the axis, at c = ±1 or at t = 0. Cells that touch the axis: axis.ts.
  */
 import type { Exterior, Grid } from "../types.ts";
-import { GAUSS16, kindOfCell, NODES, type ShapeTable, tablesAt } from "./shape.ts";
+import { type CellTables, exteriorTables, innerTables, touchOfCell } from "./axis.ts";
+import { GAUSS16, kindOfCell, NODES } from "./shape.ts";
 
 /** Numbers in a packed lower triangle of nine rows. */
 export const PACKED = 45;
@@ -21,6 +21,8 @@ const STRIDE = 1024;
 export interface CellIntegrals {
   /** Kind (see shape.ts) of every cell inside the outer circle. */
   readonly kind: Uint8Array;
+  /** How each of them meets the axis (see axis.ts); 0 nearly everywhere. */
+  readonly touch: Uint8Array;
   /** K with ν = 1, packed lower by rows, 45 numbers a cell, 1/m. */
   readonly stiffness: Float64Array;
   /** M, packed likewise, m. */
@@ -35,10 +37,11 @@ export interface CellIntegrals {
 export function integrateCells(grid: Grid, tick?: (fraction: number) => void): CellIntegrals {
   const cells = grid.cellRegion.length;
   const kind = new Uint8Array(cells);
+  const touch = new Uint8Array(cells);
   const stiffness = new Float64Array(cells * PACKED);
   const mass = new Float64Array(cells * PACKED);
   const leastJacobian = new Float64Array(cells);
-  const tables = tablesAt(GAUSS16.xi, GAUSS16.eta);
+  const tables = innerTables(grid, GAUSS16.xi, GAUSS16.eta);
   const s = new Float64Array(NODES);
   const z = new Float64Array(NODES);
   for (let c = 0; c < cells; c++) {
@@ -49,11 +52,12 @@ export function integrateCells(grid: Grid, tick?: (fraction: number) => void): C
       z[i] = grid.z[node];
     }
     kind[c] = kindOfCell(grid.r, grid.z, grid.cellNodes, c * NODES);
-    leastJacobian[c] = integrateCell(tables(kind[c]), s, z, stiffness, mass, c * PACKED);
+    touch[c] = touchOfCell(grid.r, grid.cellNodes, c * NODES);
+    leastJacobian[c] = integrateCell(tables(c), s, z, stiffness, mass, c * PACKED);
   }
   const exteriorStiffness =
     grid.exterior === null ? new Float64Array(0) : integrateExterior(grid, grid.exterior);
-  return { kind, stiffness, mass, leastJacobian, exteriorStiffness };
+  return { kind, touch, stiffness, mass, leastJacobian, exteriorStiffness };
 }
 
 const gs = new Float64Array(NODES);
@@ -62,14 +66,15 @@ const nn = new Float64Array(NODES);
 
 /** K and M of one cell, added at `at`; returns least over mean determinant. Long because it is the hot loop of a grid. */
 function integrateCell(
-  table: ShapeTable,
+  tables: CellTables,
   s: Float64Array,
   z: Float64Array,
   stiffness: Float64Array,
   mass: Float64Array,
   at: number,
 ): number {
-  const { n, dXi, dEta } = table;
+  const { n, dXi, dEta } = tables.geometry;
+  const { field } = tables;
   let least = Infinity;
   let area = 0;
   for (let p = 0; p < POINTS; p++) {
@@ -96,11 +101,11 @@ function integrateCell(
     const fz = Math.sqrt(w / (2 * sp * Math.abs(det)));
     const fn = Math.sqrt((w * Math.abs(det)) / (2 * sp));
     for (let i = 0; i < NODES; i++) {
-      const a = dXi[q + i];
-      const b = dEta[q + i];
+      const a = field.dXi[q + i];
+      const b = field.dEta[q + i];
       gs[i] = fs * (a * zEta - b * zXi);
       gz[i] = fz * (b * sXi - a * sEta);
-      nn[i] = fn * n[q + i];
+      nn[i] = fn * field.n[q + i];
     }
     let k = at;
     for (let i = 0; i < NODES; i++) {
@@ -116,21 +121,24 @@ function integrateCell(
   return (4 * least) / Math.abs(area);
 }
 
-/** K of the exterior cells. The edges that leave the axis are those of the matching circle, so that both sides fit. */
+/** K of the exterior cells. */
 function integrateExterior(grid: Grid, exterior: Exterior): Float64Array {
   const cells = exterior.cellNodes.length / NODES;
   const out = new Float64Array(cells * PACKED);
-  const tables = tablesAt(GAUSS16.xi, GAUSS16.eta);
-  for (let c = 0; c < cells; c++) {
-    const along = kindOfCell(grid.r, grid.z, exterior.cellNodes, c * NODES) % 3;
-    integrateExteriorCell(tables(along + 3 * along), exterior, c, out);
-  }
+  const tables = exteriorTables(grid, exterior, GAUSS16.xi, GAUSS16.eta);
+  for (let c = 0; c < cells; c++) integrateExteriorCell(tables(c), exterior, c, out);
   return out;
 }
 
 /** One exterior cell; the determinant's sign depends on which way the rings run and is of no matter. */
-function integrateExteriorCell(table: ShapeTable, exterior: Exterior, cell: number, out: Float64Array): void {
-  const { n, dXi, dEta } = table;
+function integrateExteriorCell(
+  tables: CellTables,
+  exterior: Exterior,
+  cell: number,
+  out: Float64Array,
+): void {
+  const { n, dXi, dEta } = tables.geometry;
+  const { field } = tables;
   const { t, c, radius } = exterior;
   const first = cell * NODES;
   for (let p = 0; p < POINTS; p++) {
@@ -148,8 +156,8 @@ function integrateExteriorCell(table: ShapeTable, exterior: Exterior, cell: numb
     const scale = Math.sqrt(GAUSS16.w[p] / (radius * Math.abs(det)));
     const ft = (scale * tp) / Math.sqrt((1 - cp) * (1 + cp));
     for (let i = 0; i < NODES; i++) {
-      gs[i] = ft * (dXi[q + i] * cEta - dEta[q + i] * cXi);
-      gz[i] = scale * (dEta[q + i] * tXi - dXi[q + i] * tEta);
+      gs[i] = ft * (field.dXi[q + i] * cEta - field.dEta[q + i] * cXi);
+      gz[i] = scale * (field.dEta[q + i] * tXi - field.dXi[q + i] * tEta);
     }
     let k = cell * PACKED;
     for (let i = 0; i < NODES; i++) {

@@ -2,6 +2,7 @@
  * Finds the cell and the (ξ, η) of a place: boxes of cells sorted into square buckets, then Newton's iteration on the cell's own map
  * (s, z)(ξ, η) = Σ N_i (s_i, z_i).
  */
+import { sideOnAxis } from "./axis.ts";
 import type { Prepared } from "./prepare.ts";
 import { emptyTable, NODES, shapeAt } from "./shape.ts";
 
@@ -12,7 +13,7 @@ export interface Place {
   readonly eta: number;
 }
 
-/** Finds places in cells inside the outer circle; null where there is none. r, z in m. */
+/** Finds places in cells inside the outer circle; null where there is none. On the axis a cell with a side there comes first. r, z in m. */
 export type Locator = (r: number, z: number) => Place | null;
 
 /** Boxes grow by this part of their size, so that bulging edges and rounding lose no point. */
@@ -51,7 +52,8 @@ export function makeLocator(prepared: Prepared): Locator {
       if (r < box[4 * c] || r > box[4 * c + 2] || z < box[4 * c + 1] || z > box[4 * c + 3]) continue;
       const place = invert(grid.r, grid.z, grid.cellNodes, integrals.kind[c], c, r * r, z);
       const beyond = Math.max(Math.abs(place.xi), Math.abs(place.eta)) - 1;
-      if (beyond <= INSIDE) return place;
+      const goodOnAxis = r > 0 || sideOnAxis(integrals.touch[c]);
+      if (beyond <= INSIDE && goodOnAxis) return place;
       if (beyond < least) {
         least = beyond;
         best = place;

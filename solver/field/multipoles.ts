@@ -7,9 +7,10 @@
  * by the orthogonality of P_n¹ (Abramowitz & Stegun 8.14.13, from memory; derived here for P_n'). Regular on the axis. The integral is
  * taken along the circle's edges with the solution's own shape functions.
  */
-import type { Complex, Grid } from "../types.ts";
+import type { Complex } from "../types.ts";
+import { exteriorTables } from "./axis.ts";
 import type { Solution } from "./prepare.ts";
-import { edgeKind, GAUSS4, middleOf, NODES, quadratics } from "./shape.ts";
+import { GAUSS4, NODES } from "./shape.ts";
 
 /** Highest pole: with sources within R/1.3 the rest is below 0.2 % at the circle itself and falls with ρ⁻²⁵. */
 export const POLES = 24;
@@ -30,20 +31,25 @@ export function multipolesOf(solution: Solution): Multipoles | null {
   const re = new Float64Array(POLES + 1);
   const im = new Float64Array(POLES + 1);
   const { p, dp } = legendreBuffers();
-  const q = new Float64Array(9);
+  const along = exteriorTables(
+    grid,
+    exterior,
+    GAUSS4.x,
+    GAUSS4.x.map(() => -1),
+  );
   for (let cell = 0; cell * NODES < exterior.cellNodes.length; cell++) {
     const first = cell * NODES;
     if (exterior.t[first] !== 1) continue;
-    const middle = middleOf(edgeOnCircle(grid, exterior.cellNodes, first));
+    const { geometry, field } = along(cell);
     for (let k = 0; k < GAUSS4.x.length; k++) {
-      quadratics(GAUSS4.x[k], middle, q);
       let [c, dc, x, y] = [0, 0, 0, 0];
       for (let a = 0; a < 3; a++) {
         const node = exterior.cellNodes[first + a];
-        c += q[a] * exterior.c[first + a];
-        dc += q[3 + a] * exterior.c[first + a];
-        x += q[a] * (solution.psi.re[node] - (solution.applied * grid.r[node] ** 2) / 2);
-        y += q[a] * solution.psi.im[node];
+        c += geometry.n[k * NODES + a] * exterior.c[first + a];
+        dc += geometry.dXi[k * NODES + a] * exterior.c[first + a];
+        const f = field.n[k * NODES + a];
+        x += f * (solution.psi.re[node] - (solution.applied * grid.r[node] ** 2) / 2);
+        y += f * solution.psi.im[node];
       }
       legendre(c, p, dp);
       const w = GAUSS4.w[k] * Math.abs(dc);
@@ -55,10 +61,6 @@ export function multipolesOf(solution: Solution): Multipoles | null {
     }
   }
   return { radius: exterior.radius, centreZ: exterior.centreZ, re, im };
-}
-
-function edgeOnCircle(grid: Grid, nodes: Int32Array, first: number): number {
-  return edgeKind(grid.r, grid.z, nodes[first], nodes[first + 1], nodes[first + 2]);
 }
 
 /** B_r and B_z (T) of the poles at (r, z) outside the circle, and ψ (Wb/rad). */

@@ -5,8 +5,8 @@
  *
  * L_a(x; m) the quadratic that is 1 at its own and 0 at the other two of the places −1, m, +1. On an ordinary cell m = n = 0:
  * the biquadratic Lagrange cell. An edge that leaves the axis at a right angle has its middle node at a quarter of s = r²; there
- * m = ∓1/2 makes s linear along the edge, so that ψ = s f(s, z) is met by polynomials in s, no part of ψ goes with r
- * (B_z would be infinite on the axis) and the map stays regular at r = 0. m and n go linearly from one edge of the cell to the
+ * m = ∓1/2 makes s linear along the edge, so that ψ = s f(s, z) is met by polynomials in s and the map stays regular at
+ * r = 0 (see axis.ts for ψ itself there). m and n go linearly from one edge of the cell to the
  * opposite one; traces on an edge depend on its own m alone, so neighbours fit; ΣN = 1 everywhere, so constants, s and z are exact.
  */
 
@@ -95,20 +95,6 @@ export function emptyTable(points: number): ShapeTable {
     n: new Float64Array(points * NODES),
     dXi: new Float64Array(points * NODES),
     dEta: new Float64Array(points * NODES),
-  };
-}
-
-/** Tables at fixed points (ξ_i, η_i), made once a kind when first asked for. */
-export function tablesAt(xi: readonly number[], eta: readonly number[]): (kind: number) => ShapeTable {
-  const made = new Map<number, ShapeTable>();
-  return (kind) => {
-    let table = made.get(kind);
-    if (table === undefined) {
-      table = emptyTable(xi.length);
-      for (let i = 0; i < xi.length; i++) shapeAt(kind, xi[i], eta[i], table, i);
-      made.set(kind, table);
-    }
-    return table;
   };
 }
 

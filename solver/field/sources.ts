@@ -9,9 +9,10 @@
 import { MU0 } from "../constants.ts";
 import { solveRefined } from "../linear/direct.ts";
 import type { Complex, ComplexVector } from "../types.ts";
+import { innerTables } from "./axis.ts";
 import { gather, multiply } from "./cellforms.ts";
 import type { Prepared, Solution, Tick } from "./prepare.ts";
-import { GAUSS16, NODES, tablesAt } from "./shape.ts";
+import { GAUSS16, NODES } from "./shape.ts";
 import { factoriseState, fieldOf } from "./solve.ts";
 import { checkState, type FieldState, reluctivityOf, rowSums } from "./system.ts";
 
@@ -114,11 +115,12 @@ export function solvePrescribed(
 
 /** ∫ N_i dr dz, nine numbers a cell. */
 function sectionIntegrals(prepared: Prepared): Float64Array {
-  const { grid, integrals } = prepared;
+  const { grid } = prepared;
   const out = new Float64Array(grid.cellNodes.length);
-  const tables = tablesAt(GAUSS16.xi, GAUSS16.eta);
+  const tables = innerTables(grid, GAUSS16.xi, GAUSS16.eta);
   for (let c = 0; c < grid.cellRegion.length; c++) {
-    const { n, dXi, dEta } = tables(integrals.kind[c]);
+    const { geometry, field } = tables(c);
+    const { n, dXi, dEta } = geometry;
     for (let p = 0; p < GAUSS16.w.length; p++) {
       let [s, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0];
       for (let i = 0; i < NODES; i++) {
@@ -132,7 +134,7 @@ function sectionIntegrals(prepared: Prepared): Float64Array {
         zEta += dEta[k] * grid.z[node];
       }
       const w = (GAUSS16.w[p] * (sXi * zEta - sEta * zXi)) / (2 * Math.sqrt(s));
-      for (let i = 0; i < NODES; i++) out[c * NODES + i] += w * n[p * NODES + i];
+      for (let i = 0; i < NODES; i++) out[c * NODES + i] += w * field.n[p * NODES + i];
     }
   }
   return out;

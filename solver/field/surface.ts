@@ -9,6 +9,7 @@
  */
 import { MU0 } from "../constants.ts";
 import { SolverError } from "../errors.ts";
+import { axisEdge } from "./axis.ts";
 import { gather, multiply } from "./cellforms.ts";
 import { cellsOf } from "./observe.ts";
 import type { Solution } from "./prepare.ts";
@@ -100,6 +101,7 @@ function chainOf(solution: Solution, regions: readonly number[], cells: readonly
 }
 
 const Q = new Float64Array(9);
+const TRACE = new Float64Array(6);
 
 /** Masses of one edge; returns its area of revolution. On an edge that leaves the axis x = −1 + 2τ² keeps r smooth in τ. */
 function integrateEdge(
@@ -120,13 +122,14 @@ function integrateEdge(
     const s = Q[0] * r[i] ** 2 + Q[1] * r[j] ** 2 + Q[2] * r[k] ** 2;
     const ds = Q[3] * r[i] ** 2 + Q[4] * r[j] ** 2 + Q[5] * r[k] ** 2;
     const dz = Q[3] * z[i] + Q[4] * z[j] + Q[5] * z[k];
+    axisEdge(r[i] ** 2, r[j] ** 2, r[k] ** 2, kind, x, TRACE);
     const radius = Math.sqrt(s);
     const dl = w * Math.hypot(ds / (2 * radius), dz);
     area += 2 * Math.PI * radius * dl;
     for (let a = 0; a < 3; a++) {
       for (let b = 0; b < 3; b++) {
-        chain.mass[e * 9 + 3 * a + b] += Q[a] * Q[b] * dl;
-        chain.areaMass[e * 9 + 3 * a + b] += Q[a] * Q[b] * 2 * Math.PI * radius * dl;
+        chain.mass[e * 9 + 3 * a + b] += TRACE[a] * TRACE[b] * dl;
+        chain.areaMass[e * 9 + 3 * a + b] += TRACE[a] * TRACE[b] * 2 * Math.PI * radius * dl;
       }
     }
   }
