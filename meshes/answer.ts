@@ -1,0 +1,169 @@
+/**
+ * What one grid says of a scene, per ampere through the coil: both states solved, the numbers that will carry bars by name,
+ * and the parts they are sums of.
+ */
+import {
+  type CoilSolution,
+  cutGrid,
+  type GridAnswer,
+  type Losses,
+  lossesOf,
+  makeProbe,
+  powerBalance,
+  prepare,
+  quantileDensity,
+  sliceShares,
+  solveState,
+  surfaceField,
+  type Tick,
+} from "../solver/index.ts";
+import type { Built, State } from "./build.ts";
+import type { Body, Scene } from "./scene.ts";
+import { extentOf } from "./surfaces.ts";
+
+/** A solved state of one grid. */
+export interface Solved {
+  readonly solution: CoilSolution;
+  readonly losses: Losses;
+}
+
+/** Figures of one part at 1 A. */
+export interface PartFigures {
+  readonly body: Body;
+  readonly region: number;
+  readonly power: number;
+  readonly surfaceH: number;
+  readonly surfaceArea: number;
+  readonly peak: number;
+  /** [r, z], m; null where no heat arises. */
+  readonly hotSpot: readonly [number, number] | null;
+  readonly slices: readonly number[];
+}
+
+export interface Answer extends GridAnswer {
+  readonly empty: Solved;
+  /** null when the scene has no part. */
+  readonly loaded: Solved | null;
+  readonly figures: readonly PartFigures[];
+  readonly balance: number;
+  readonly iterations: number;
+}
+
+export const SLICES = 8;
+
+/** Solves level n of a built scene. `tick` hears the done fraction and may throw. */
+export function answerAt(scene: Scene, built: Built, level: number, tick: Tick): Answer {
+  const grid = cutGrid(built.mesh, level);
+  const turnOfRegion = built.materials("empty").map((m) => m.turn);
+  const hasParts = scene.bodies.some((b) => b.role === "part");
+  const share = hasParts ? 0.45 : 0.9;
+  const prepared = prepare(grid, turnOfRegion, (f) => tick(0.1 * f));
+  const omega = 2 * Math.PI * scene.frequency;
+  const solve = (state: State, from: number): Solved => {
+    const solution = solveState(prepared, { materials: built.materials(state), omega }, scene.circuit, (f) =>
+      tick(from + share * f),
+    );
+    return { solution, losses: lossesOf(solution) };
+  };
+  const empty = solve("empty", 0.1);
+  const loaded = hasParts ? solve("loaded", 0.1 + share) : null;
+  const working = loaded ?? empty;
+  const partFigures = scene.bodies.flatMap((body, b) =>
+    body.role === "part" ? [figuresOf(working, body, built.regionOfBody(b))] : [],
+  );
+  const table = new Table();
+  addTerminals(table, "empty", empty);
+  if (loaded !== null) addTerminals(table, "loaded", loaded);
+  addPowers(table, scene, built, working);
+  partFigures.forEach((p, i) => {
+    addPart(table, p, i);
+  });
+  addStray(table, scene, working);
+  const balances = [empty, ...(loaded === null ? [] : [loaded])].map(
+    (s) => powerBalance(s.solution, s.losses).active,
+  );
+  return {
+    level,
+    unknowns: prepared.system.structure.unknowns,
+    values: table.values,
+    parts: table.parts,
+    empty,
+    loaded,
+    figures: partFigures,
+    balance: Math.max(...balances),
+    iterations: 1,
+  };
+}
+
+class Table {
+  readonly values = new Map<string, number>();
+  readonly parts = new Map<string, readonly number[]>();
+
+  add(name: string, value: number, parts: readonly number[] = [value]): void {
+    this.values.set(name, value);
+    this.parts.set(name, parts);
+  }
+}
+
+/** R as the sum of the regions' powers, X as that of their energies and the energy outside. */
+function addTerminals(table: Table, state: State, { solution, losses }: Solved): void {
+  const { re, im } = solution.impedance;
+  table.add(`${state}.R`, re, [...losses.regionPower]);
+  const reactive = [...losses.regionEnergy, losses.exteriorEnergy].map((w) => 2 * solution.omega * w);
+  table.add(`${state}.X`, im, reactive);
+}
+
+function addPowers(table: Table, scene: Scene, built: Built, { losses }: Solved): void {
+  const of = (wanted: (b: Body) => boolean): number[] =>
+    scene.bodies.flatMap((b, i) => (wanted(b) ? [losses.regionPower[built.regionOfBody(i)] ?? 0] : []));
+  const isHeated = (b: Body): boolean => b.role === "part" && b.heated;
+  const sums: [string, number[]][] = [
+    ["coil", [...losses.turnPower]],
+    ["heated", of(isHeated)],
+    ["other", of((b) => !isHeated(b))],
+  ];
+  for (const [name, powers] of sums)
+    table.add(
+      name,
+      powers.reduce((a, b) => a + b, 0),
+      powers,
+    );
+}
+
+function figuresOf({ solution, losses }: Solved, body: Body, region: number): PartFigures {
+  const surface = surfaceField(solution, [region]);
+  const power = losses.regionPower[region] ?? 0;
+  const { low, high } = extentOf(body);
+  const heights = Array.from({ length: SLICES + 1 }, (_, k) => low + ((high - low) * k) / SLICES);
+  const hot = power > 0 ? quantileDensity(solution, [region], 0.999) : null;
+  return {
+    body,
+    region,
+    power,
+    surfaceH: surface.rms,
+    surfaceArea: surface.area,
+    peak: hot?.density ?? 0,
+    hotSpot: hot === null ? null : [hot.r, hot.z],
+    slices: power > 0 ? [...sliceShares(solution, losses, [region], heights)] : heights.slice(1).map(() => 0),
+  };
+}
+
+function addPart(table: Table, p: PartFigures, i: number): void {
+  table.add(
+    `part${i}.power`,
+    p.power,
+    p.slices.map((s) => s * p.power),
+  );
+  table.add(`part${i}.surfaceH`, p.surfaceH);
+  table.add(`part${i}.peak`, p.peak);
+}
+
+function addStray(table: Table, scene: Scene, { solution }: Solved): void {
+  if (scene.strayPoints.length === 0) return;
+  const probe = makeProbe(solution);
+  scene.strayPoints.forEach(([r, z], i) => {
+    const { br, bz } = probe(r, z);
+    const components = [br.re, br.im, bz.re, bz.im];
+    table.add(`stray${i}`, Math.hypot(...components), components);
+  });
+}

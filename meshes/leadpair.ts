@@ -1,0 +1,76 @@
+/**
+ * A straight pair of leads, go and return side by side, as two rings of very large radius with opposed currents: the same
+ * solution then holds the skin and proximity effect of any section. Bending a pair of spacing s to radius r costs (s/r)².
+ */
+import { cutGrid, type GridAnswer, prepare, refine, solveState } from "../solver/index.ts";
+import { build } from "./build.ts";
+import type { Scene } from "./scene.ts";
+
+/** Radius of the rings in spacings. */
+const RADIUS = 100;
+const LIMIT = 60_000;
+
+export interface LeadPair {
+  /** Ω and H of go and return together; bars as half-widths. */
+  readonly resistance: number;
+  readonly resistanceBar: number;
+  readonly inductance: number;
+  readonly inductanceBar: number;
+}
+
+/** Resistance and inductance of the scene's leads at its frequency; zeros without leads. */
+export function leadPair(scene: Scene): LeadPair {
+  const { leads, section } = scene;
+  if (leads === null) return { resistance: 0, resistanceBar: 0, inductance: 0, inductanceBar: 0 };
+  const across = section.kind === "round" ? 2 * section.radius : Math.max(section.width, section.height);
+  const r = RADIUS * (leads.spacing + across);
+  const pair: Scene = {
+    ...scene,
+    turns: [
+      { r, z: -leads.spacing / 2 },
+      { r, z: leads.spacing / 2 },
+    ],
+    circuit: { turns: 2, path: new Int32Array(2), sense: Int8Array.from([1, -1]) },
+    advance: [
+      { axial: 0, radial: 0 },
+      { axial: 0, radial: 0 },
+    ],
+    leads: null,
+    bodies: [],
+    strayPoints: [],
+  };
+  const built = build(pair);
+  const materials = built.materials("empty");
+  const omega = 2 * Math.PI * scene.frequency;
+  const solveAt = (level: number): GridAnswer => {
+    const prepared = prepare(
+      cutGrid(built.mesh, level),
+      materials.map((m) => m.turn),
+    );
+    const { impedance } = solveState(prepared, { materials, omega }, pair.circuit);
+    return {
+      level,
+      unknowns: prepared.system.structure.unknowns,
+      values: new Map([
+        ["R", impedance.re],
+        ["X", impedance.im],
+      ]),
+      parts: new Map(),
+    };
+  };
+  const { finest, bars } = refine(
+    solveAt,
+    () => LIMIT,
+    () => 0,
+    LIMIT,
+  );
+  const scale = leads.length / (2 * Math.PI * r);
+  const value = (name: string): number => scale * (finest.values.get(name) ?? 0);
+  const bar = (name: string): number => scale * (bars.get(name) ?? 0);
+  return {
+    resistance: value("R"),
+    resistanceBar: bar("R"),
+    inductance: value("X") / omega,
+    inductanceBar: bar("X") / omega,
+  };
+}
