@@ -54,7 +54,7 @@ export function show(quantity: Uncertain, unit: Unit): Shown {
   const value = quantity.value / unit.factor;
   const bar = quantity.plusMinus / unit.factor;
   const place = lastPlace(value, bar);
-  if (bar === 0) return { value: plain(value, mostDigits), bar: "" };
+  if (bar === 0) return { value: plain(value, 5), bar: "" };
   const step = 10 ** place;
   // Rounding up keeps the promise of the bar; the small allowance keeps 0.3 from becoming 0.4 by binary rounding.
   return { value: atPlace(value, place), bar: atPlace(Math.ceil(bar / step - 1e-9) * step, place) };

@@ -25,7 +25,9 @@ const perArea = { factor: 1e4, symbol: "W/cm²" };
 const perVolume = { factor: 1e6, symbol: "W/cm³" };
 
 function spot(at: readonly number[] | null): string {
-  return at === null ? "" : ` at r ${plain(at[0]!, 4)}, z ${plain(at[1]!, 4)} mm`;
+  if (at === null) return "";
+  const [r, z] = at.map((mm) => String(Number(mm.toFixed(2))));
+  return ` at r ${r}, z ${z} mm`;
 }
 
 /** "63 % within 0.16 mm of the surface, …, hottest at mid-height." */
@@ -42,7 +44,7 @@ function whereItSits(part: PartResult): string[] {
 
 function depths(shares: readonly DepthShare[] | null, from: string): string {
   if (shares === null) return "";
-  const list = shares.map(({ depthMm, share }) => `${percent(share)} within ${plain(depthMm, 2)} mm`);
+  const list = shares.map(({ depthMm, share }) => `${percent(share)} within ${plain(depthMm, 3)} mm`);
   return `${list.join(", ")} ${from}`;
 }
 

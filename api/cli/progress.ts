@@ -1,18 +1,12 @@
 /** One quiet line of progress on stderr: rewritten in place on a terminal, plain lines elsewhere; nothing in the first second. */
 
+import type { Progress } from "../../meshes/predict.ts";
+
 /** Where the line goes. */
 export interface ProgressSink {
   write(text: string): unknown;
   readonly isTTY?: boolean | undefined;
   readonly columns?: number | undefined;
-}
-
-/** How far the work is. */
-export interface Progress {
-  /** 0 … 1. */
-  readonly fraction: number;
-  /** In words: "second grid of three, R within 0.6 %". */
-  readonly stage: string;
 }
 
 /** Quick work stays silent this long, ms. */
@@ -47,6 +41,8 @@ export function progressLine(sink: ProgressSink): ProgressLine {
   timer.unref();
   return {
     report(progress) {
+      // The end needs no words: the answer follows at once.
+      if (progress.fraction >= 1) return;
       latest = progress;
       if (late) show();
     },

@@ -117,7 +117,7 @@ describe("the people's table", () => {
       /capacitance for resonance +173\.30 ± 0\.05 µF/,
       /over its whole surface +39\.33 ± 0\.03 W\/cm²/,
       /hottest spot +3437 ± 24 W\/cm³ at r 15, z 0\.4 mm/,
-      "62.9 % within 0.16 mm, 86.0 % within 0.33 mm, 97.8 % within 0.65 mm of the surface",
+      "62.9 % within 0.162 mm, 86.0 % within 0.325 mm, 97.8 % within 0.65 mm of the surface",
       "around mid-height",
       /7 +29\.00 +31\.50 +60\.00/,
       /27\.150 +± 0\.020 +µT/,

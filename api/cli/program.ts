@@ -1,0 +1,64 @@
+/** The `emberturn` command: its words, its options, its exit statuses, and what happens when a pipe breaks or a key stops it. */
+import { Command, CommanderError } from "commander";
+import { version } from "../../package.json";
+import { exitStatus, type Failure, toFailure, UsageError } from "../errors.ts";
+import { type SolveOptions, solveCommand } from "./solve.ts";
+
+/** Runs one command line and sets the process's exit status; `entry` is the bundle to start threads from. */
+export async function runProgram(args: readonly string[], entry: URL): Promise<void> {
+  catchSignals();
+  const json = args.includes("--json");
+  try {
+    await commands(entry).parseAsync(args, { from: "user" });
+  } catch (error) {
+    if (error instanceof CommanderError && error.exitCode === 0) return;
+    if (error instanceof CommanderError && error.code === "commander.help") {
+      // No command at all: the help has been shown on stderr, which is answer enough.
+      process.exitCode = exitStatus.refused;
+      return;
+    }
+    const mapped =
+      error instanceof CommanderError ? new UsageError(error.message.replace(/^error: /, "")) : error;
+    complain(toFailure(mapped), json);
+  }
+}
+
+function complain({ problem, words, exit }: Failure, json: boolean): void {
+  process.stderr.write(json ? `${JSON.stringify(problem, null, 2)}\n` : `${words}\n`);
+  process.exitCode = exit;
+}
+
+/** Ends at once when stopped, quietly when nobody reads any more, and in words whatever else happens. */
+function catchSignals(): void {
+  process.on("SIGINT", () => process.exit(130));
+  process.on("SIGTERM", () => process.exit(143));
+  for (const stream of [process.stdout, process.stderr]) {
+    stream.on("error", (error: NodeJS.ErrnoException) => {
+      if (error.code === "EPIPE") process.exit(process.exitCode ?? exitStatus.done);
+      process.exit(exitStatus.failed);
+    });
+  }
+}
+
+function commands(entry: URL): Command {
+  const program = new Command("emberturn")
+    .description(
+      "What an induction coil will measure, and where its part gets hot, before the copper is bent.",
+    )
+    .version(version)
+    .exitOverride()
+    // Usage errors are thrown and said once, by the mapper; help asked for goes to stdout as usual.
+    .configureOutput({ outputError: () => {} });
+  program
+    .command("solve")
+    .description("Work out R, L, Q, powers and heat of one design.")
+    .argument("<design>", "the design document's file, or - for standard input")
+    .option("--json", "print the result document instead of the table")
+    .option("--picture <file.svg>", "write a picture of where the heat sits")
+    .addHelpText(
+      "after",
+      "\nExit status: 0 done; 2 the document is refused; 3 solved, but short of accuracyPercent; 1 anything else.",
+    )
+    .action((design: string, options: SolveOptions) => solveCommand(design, options, entry));
+  return program;
+}
