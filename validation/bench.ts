@@ -11,6 +11,7 @@ import {
   type Prepared,
   prepare,
   type RegionMaterial,
+  solvePrescribed,
 } from "../solver/index.ts";
 import type { Constants, Figure } from "./check.ts";
 
@@ -110,4 +111,42 @@ export function limitOfHalves(figures: readonly (readonly Figure[])[]): Figure[]
       bar: column.reduce((sum, f, k) => sum + Math.abs(weights[k]!) * (f.bar ?? 0), 0),
     };
   });
+}
+
+/** r lines from the surface a inward to b, first step half a skin depth, growing by half; ascending. */
+export function gradedInward(a: number, b: number, depth: number): number[] {
+  const lines = [a];
+  let step = Math.min(depth / 2, (a - b) / 5);
+  let r = a;
+  while (r - b > 1.6 * step) {
+    r -= step;
+    lines.push(r);
+    step *= 1.5;
+  }
+  return [b, ...lines.reverse()];
+}
+
+/**
+ * ΔR (Ω) and ΔL (H) a conductor (region 2) adds to a coil of N turns (region 1, uniform density): the difference of two
+ * solutions on one grid, with the conductor and with air in its place.
+ */
+export function reflectedImpedance(
+  mesh: PatchMesh,
+  turns: number,
+  omega: number,
+  conductivity: number,
+  mur: number,
+  constants: Constants,
+): [Figure, Figure] {
+  const space = air(constants);
+  const coil = [{ region: 1, density: { re: 1, im: 0 } }];
+  const [dR, dL] = onTwoGrids(mesh, [-1, -1, -1], [1, 2], (prepared) => {
+    const [loaded, empty] = [metal(constants, conductivity, mur), space].map((third) => {
+      const [link] = solvePrescribed(prepared, { materials: [space, space, third], omega }, coil).linkages;
+      const ampere = link!.current.re / turns;
+      return { re: (turns * link!.linkage.re) / ampere, im: (turns * link!.linkage.im) / ampere };
+    });
+    return [-omega * (loaded!.im - empty!.im), loaded!.re - empty!.re];
+  });
+  return [dR!, dL!];
 }
