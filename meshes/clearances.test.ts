@@ -91,6 +91,14 @@ describe("copper and bodies", () => {
     ],
   ]);
 
+  test("the accepted measure is rounded to the accepted side", () => {
+    const [fault] = faultsOf((d) => {
+      d.coil.winding.boreDiameterMm = 33.33337;
+      d.parts[0].diameterMm = 34;
+    });
+    expect(fault?.accepted).toBe("diameterMm below 33.3333");
+  });
+
   test("the accepted measure is accepted", () => {
     expect(faultsOf((d) => (d.parts[0].diameterMm = 49.99))).toEqual([]);
     expect(faultsOf(parts(ball(0, 49.99)))).toEqual([]);
