@@ -1,41 +1,48 @@
-/** The heat map of a solved state: every cell of copper, parts and guides with its mean power density, and the outlines. */
+/** The heat map of a solved state: the cells of copper, parts and guides cut into pieces with their power density, and the outlines. */
+import { type CellSamples, heatSampler } from "../solver/index.ts";
 import type { Answer } from "./answer.ts";
 import type { HeatMap, Outline } from "./heatmap.ts";
 import type { Piece, Point, Scene, Section } from "./scene.ts";
 
 /** Straight pieces an outlined circle is drawn with. */
 const CIRCLE = 48;
-const CORNERS = [0, 2, 8, 6] as const;
+/** A picture wants about so many pieces; each cell is cut alike, into at most so many along. */
+const PIECES = 60_000;
+const MOST_ALONG = 4;
 
 /** Heat at `current` A through the coil; the loaded state, or the empty one where there is no part. */
 export function heatMap(scene: Scene, answer: Answer, current: number): HeatMap {
-  const { solution, losses } = answer.loaded ?? answer.empty;
+  const { solution } = answer.loaded ?? answer.empty;
   const { grid } = solution.prepared;
   const { outlines, outlineOfRegion } = outlinesOf(scene);
   const cells = Array.from(grid.cellRegion.keys()).filter((c) => (grid.cellRegion[c] ?? 0) > 0);
-  const corners = new Float64Array(8 * cells.length);
-  const density = new Float64Array(cells.length);
-  const outline = new Int32Array(cells.length);
+  const m = Math.min(MOST_ALONG, Math.max(1, Math.floor(Math.sqrt(PIECES / cells.length))));
+  const read = heatSampler(solution, m);
+  const corners = new Float64Array(8 * m * m * cells.length);
+  const density = new Float64Array(m * m * cells.length);
+  const outline = new Int32Array(m * m * cells.length);
   cells.forEach((c, i) => {
-    const ids = CORNERS.map((k) => grid.cellNodes[9 * c + k] ?? 0);
-    ids.forEach((id, k) => {
-      corners[8 * i + 2 * k] = grid.r[id] ?? 0;
-      corners[8 * i + 2 * k + 1] = grid.z[id] ?? 0;
-    });
-    density[i] =
-      (current ** 2 * (losses.cellPower[c] ?? 0)) /
-      volumeOf(ids.map((id) => [grid.r[id] ?? 0, grid.z[id] ?? 0]));
-    outline[i] = outlineOfRegion[grid.cellRegion[c] ?? 0] ?? 0;
+    const samples = read(c);
+    const first = m * m * i;
+    outline.fill(outlineOfRegion[grid.cellRegion[c] ?? 0] ?? 0, first, first + m * m);
+    density.set(
+      samples.density.map((p) => p * current ** 2),
+      first,
+    );
+    putCorners(samples, m, corners, 8 * first);
   });
   return { corners, density, outline, outlines };
 }
 
-/** Volume of revolution of a polygon: 2π times its first moment about the axis, m³. */
-function volumeOf(points: readonly Point[]): number {
-  return points.reduce((sum, [r, z], i) => {
-    const [r2, z2] = points[(i + 1) % points.length] ?? [0, 0];
-    return sum + (Math.PI * (r * z2 - r2 * z) * (r + r2)) / 3;
-  }, 0);
+/** Four corners a piece, counter-clockwise, from the lattice of (m + 1)² corners. */
+function putCorners({ cornerR, cornerZ }: CellSamples, m: number, out: Float64Array, first: number): void {
+  for (let piece = 0; piece < m * m; piece++) {
+    const low = piece + Math.floor(piece / m);
+    [low, low + 1, low + m + 2, low + m + 1].forEach((corner, k) => {
+      out[first + 8 * piece + 2 * k] = cornerR[corner] ?? 0;
+      out[first + 8 * piece + 2 * k + 1] = cornerZ[corner] ?? 0;
+    });
+  }
 }
 
 function outlinesOf(scene: Scene): { outlines: Outline[]; outlineOfRegion: number[] } {

@@ -15,7 +15,7 @@ export interface Outline {
 export interface HeatMap {
   /** Eight numbers a cell: r0, z0, … r3, z3 of its corners in counter-clockwise order, m, r ≥ 0. */
   readonly corners: Float64Array;
-  /** One number a cell, its mean power density, W/m³ (rms drive); 0 where no heat arises. */
+  /** One number a cell, its power density, W/m³ (rms drive); 0 where no heat arises. */
   readonly density: Float64Array;
   /** One number a cell: the index in `outlines` of (one of) its body's outlines. */
   readonly outline: Int32Array;

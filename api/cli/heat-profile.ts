@@ -1,32 +1,41 @@
-/** How the parts' heat is spread over the height: power per height in equal bins, whatever the skin's thickness. */
+/** How the parts' heat is spread along the height or the radius: power per length in equal bins, whatever the skin's thickness. */
 import type { HeatMap } from "../../meshes/heatmap.ts";
 import { ringVolume } from "./heat-scale.ts";
 
-/** Lowest and highest corner of a cell, m. */
-function span(corners: Float64Array, cell: number): [number, number] {
-  const z = [1, 3, 5, 7].map((k) => corners[8 * cell + k]!);
-  return [Math.min(...z), Math.max(...z)];
+/** Equal bins along one direction between two positions, m, which hold all parts. */
+export interface Bins {
+  readonly along: "r" | "z";
+  readonly from: number;
+  readonly to: number;
+  readonly count: number;
+}
+
+/** Lowest and highest corner of a cell along r or z, m. */
+function span(corners: Float64Array, cell: number, along: "r" | "z"): [number, number] {
+  const first = 8 * cell + (along === "r" ? 0 : 1);
+  const at = [0, 2, 4, 6].map((k) => corners[first + k]!);
+  return [Math.min(...at), Math.max(...at)];
 }
 
 /**
- * Power of all parts per height, W/m, in `bins` equal bins between `zMin` and `zMax` (m), which hold all parts.
- * A cell's power is spread evenly over its own height; the sum of bins times their height is the parts' power.
+ * Power of all parts per length, W/m, a number a bin. A cell's power is spread evenly over its own extent; the sum of bins
+ * times their width is the parts' power.
  */
-export function powerPerHeight(heat: HeatMap, zMin: number, zMax: number, bins: number): Float64Array {
-  const profile = new Float64Array(bins);
-  const height = (zMax - zMin) / bins;
+export function powerPerLength(heat: HeatMap, { along, from, to, count }: Bins): Float64Array {
+  const profile = new Float64Array(count);
+  const width = (to - from) / count;
   const parts = new Set(heat.outlines.flatMap(({ role }, k) => (role === "part" ? [k] : [])));
   heat.density.forEach((density, cell) => {
     if (density <= 0 || !parts.has(heat.outline[cell]!)) return;
     const power = 2 * Math.PI * ringVolume(heat.corners, cell) * density;
-    const [low, high] = span(heat.corners, cell);
-    const first = Math.max(0, Math.floor((low - zMin) / height));
-    const last = Math.min(bins - 1, Math.floor((high - zMin) / height));
+    const [low, high] = span(heat.corners, cell, along);
+    const first = Math.max(0, Math.floor((low - from) / width));
+    const last = Math.min(count - 1, Math.floor((high - from) / width));
     for (let bin = first; bin <= last; bin++) {
-      const from = Math.max(low, zMin + bin * height);
-      const to = Math.min(high, zMin + (bin + 1) * height);
-      const share = high > low ? Math.max(0, to - from) / (high - low) : 1;
-      profile[bin]! += (power * share) / height;
+      const start = Math.max(low, from + bin * width);
+      const end = Math.min(high, from + (bin + 1) * width);
+      const share = high > low ? Math.max(0, end - start) / (high - low) : 1;
+      profile[bin]! += (power * share) / width;
     }
   });
   return profile;

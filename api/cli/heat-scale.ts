@@ -29,9 +29,10 @@ export function ringVolume(corners: Float64Array, cell: number): number {
  * not darken all the rest. Logarithmic when less than a third of the volume lies above a twentieth of the top (a thin hot
  * skin), else linear from 0. Null when nothing is heated.
  */
-export function scaleFor({ corners, density }: HeatMap): HeatScale | null {
-  const cells = Array.from(density, (value, k) => ({ value, volume: ringVolume(corners, k) }))
-    .filter(({ value }) => value > 0)
+export function scaleFor({ corners, density, outline, outlines }: HeatMap): HeatScale | null {
+  const coloured = outlines.map(({ role }) => role !== "guide");
+  const cells = Array.from(density, (value, k) => ({ value, volume: ringVolume(corners, k), k }))
+    .filter(({ value, k }) => value > 0 && coloured[outline[k]!])
     .sort((a, b) => b.value - a.value);
   const total = cells.reduce((sum, { volume }) => sum + volume, 0);
   if (total === 0) return null;

@@ -33,10 +33,10 @@ function spot(at: readonly number[] | null): string {
 /** "63 % within 0.16 mm of the surface, …, hottest at mid-height." */
 function whereItSits(part: PartResult): string[] {
   const sentences = [
-    depths(part.depthShares, "of the surface"),
+    depths(part.depthShares, "the surface"),
     // A solid cylinder's side tells little beyond its nearest surface; with a bore the two sides are worth telling apart.
-    part.boreDepthShares === null ? "" : depths(part.sideDepthShares, "of the outer side"),
-    depths(part.boreDepthShares, "of the bore"),
+    part.boreDepthShares === null ? "" : depths(part.sideDepthShares, "the outer side"),
+    depths(part.boreDepthShares, "the bore"),
   ].filter((sentence) => sentence !== "");
   const text = sentences.length === 0 ? "" : `Its heat: ${sentences.join("; ")}; `;
   return wrap(`${text}${text === "" ? "Most" : "most"} of it ${height(part.sliceShares)}.`, "  ");
@@ -44,8 +44,9 @@ function whereItSits(part: PartResult): string[] {
 
 function depths(shares: readonly DepthShare[] | null, from: string): string {
   if (shares === null) return "";
+  if (shares.every(({ share }) => share < 5e-4)) return `next to none at ${from}`;
   const list = shares.map(({ depthMm, share }) => `${percent(share)} within ${plain(depthMm, 3)} mm`);
-  return `${list.join(", ")} ${from}`;
+  return `${list.join(", ")} of ${from}`;
 }
 
 /** Where along the height the warmest neighbourhood lies, in words. */

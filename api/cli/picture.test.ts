@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import type { HeatMap } from "../../meshes/heatmap.ts";
-import { powerPerHeight } from "./heat-profile.ts";
+import { heatColour } from "./colour.ts";
+import { powerPerLength } from "./heat-profile.ts";
 import { marks, position, roundStep, scaleFor } from "./heat-scale.ts";
 import { joinCells } from "./patches-of-colour.ts";
 import { renderPicture } from "./picture.ts";
@@ -107,22 +108,28 @@ describe("the colour scale", () => {
   });
 });
 
-describe("the profile over the height", () => {
+describe("the profile of the heat", () => {
   it("adds up to the parts' power, rings weighted by their radius, bins cut through cells", () => {
     // A cylinder of radius and height a, density z: ∫ z dV = π a⁴ / 2 in all, z π a² per height.
     const a = 0.03;
     const heat = block(64, a, (_, z) => z);
-    const bins = powerPerHeight(heat, -0.01, 0.05, 37);
+    const bins = powerPerLength(heat, { along: "z", from: -0.01, to: 0.05, count: 37 });
     const height = 0.06 / 37;
     expect(bins.reduce((sum, v) => sum + v * height, 0)).toBeCloseTo((Math.PI * a ** 4) / 2, 12);
     expect(bins[18]! / (Math.PI * a * a * (-0.01 + 18.5 * height))).toBeCloseTo(1, 2);
     expect(bins[0]).toBe(0);
+    // The same cylinder along the radius: 2πr ∫ z dz = π a² r.
+    const rings = powerPerLength(heat, { along: "r", from: 0, to: a, count: 15 });
+    rings.forEach((value, k) => {
+      expect(value / (Math.PI * a * a * ((k + 0.5) * (a / 15)))).toBeCloseTo(1, 1);
+    });
+    expect(rings.reduce((sum, v) => sum + (v * a) / 15, 0)).toBeCloseTo((Math.PI * a ** 4) / 2, 12);
   });
 
   it("leaves copper out", () => {
     const heat = block(4, 0.03, () => 1e6);
     const copper = { ...heat, outlines: [{ ...heat.outlines[0]!, role: "copper" as const }] };
-    expect(Math.max(...powerPerHeight(copper, 0, 0.03, 5))).toBe(0);
+    expect(Math.max(...powerPerLength(copper, { along: "z", from: 0, to: 0.03, count: 5 }))).toBe(0);
   });
 });
 
@@ -152,6 +159,32 @@ describe("the heat picture", () => {
     ).toContain("Nothing here takes heat.");
     expect(renderPicture(map, { ...caption, skinDepth: 2e-5 })).toContain("thinner than a line");
     expect(renderPicture(map, caption)).not.toContain("thinner than a line");
+  });
+
+  it("tells the heat over the height, of flat designs over the radius", () => {
+    const { outlines } = map;
+    const flat = {
+      ...map,
+      outlines: [
+        {
+          ...outlines[0]!,
+          points: [
+            [0, 0],
+            [0.3, 0],
+            [0.3, 0.03],
+            [0, 0.03],
+          ] as const,
+        },
+      ],
+    };
+    expect(renderPicture(map, caption)).toContain("heat per height");
+    expect(renderPicture(flat, caption)).toContain("heat per radius");
+  });
+
+  it("leaves guides hatched, though they take a little heat", () => {
+    const guide = { ...map, outlines: [{ ...map.outlines[0]!, role: "guide" as const }] };
+    expect(renderPicture(guide, caption)).not.toContain(heatColour(0));
+    expect(renderPicture(guide, caption)).toContain('fill="url(#guide)"');
   });
 
   it("draws to scale: a square is square, whatever its size", () => {

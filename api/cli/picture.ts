@@ -5,7 +5,7 @@
 import type { HeatMap, Outline } from "../../meshes/heatmap.ts";
 import { heatColour } from "./colour.ts";
 import { plain } from "./figures.ts";
-import { powerPerHeight } from "./heat-profile.ts";
+import { powerPerLength } from "./heat-profile.ts";
 import { type HeatScale, marks, position, roundStep, scaleFor } from "./heat-scale.ts";
 import { joinCells } from "./patches-of-colour.ts";
 
@@ -21,12 +21,17 @@ export interface Caption {
 const paper = "#fbfaf6";
 const ink = "#26221c";
 const faint = "#8a8378";
+/** Bodies that take no heat. */
+const cold = "#dcd8ce";
 /** Width of the picture and the box the drawing fits in, px. */
 const page = { width: 1080, left: 84, boxWidth: 640, boxHeight: 620, top: 64, lineHeight: 21 };
 /** Drawing steps a pixel: positions are whole steps. */
 const fine = 10;
-/** Length of the longest bar of the height profile, px. */
-const profileWidth = 110;
+/** Height of the colour bar, px. */
+const legendLength = 288;
+/** Length of the longest bar of a profile, px, and the room a profile takes below a flat drawing. */
+const profileLength = 110;
+const flatRoom = 190;
 /** Colours that are told apart. */
 const shades = 48;
 
@@ -61,9 +66,10 @@ export function renderPicture(heat: HeatMap, caption: Caption): string {
   const frame = frameOf(heat.outlines);
   const scale = scaleFor(heat);
   const top = page.top + page.lineHeight * caption.lines.length + 38;
-  const height = Math.max((frame.zMax - frame.zMin) * frame.scale, 330);
+  const height = (frame.zMax - frame.zMin) * frame.scale;
   const notes = notesFor(scale, caption, frame);
-  const total = Math.round(top + height + 76 + 18 * notes.length);
+  const foot = top + Math.max(height + (isFlat(frame) ? flatRoom + 34 : 78), legendLength + 40);
+  const total = Math.round(foot + 18 * notes.length);
   const axisX = page.left + page.boxWidth / 2;
   const middle = top + height / 2 + ((frame.zMax + frame.zMin) / 2) * frame.scale;
   return [
@@ -74,13 +80,13 @@ export function renderPicture(heat: HeatMap, caption: Caption): string {
     `<text x="40" y="44" font-size="22" font-weight="600">${xml(caption.title)}</text>`,
     ...caption.lines.map((line, k) => label(40, page.top + 8 + page.lineHeight * k, line)),
     `<g transform="translate(${num(axisX)} ${num(middle)})">`,
-    `<g id="half">${bodies(heat.outlines, frame)}${colours(heat, scale, frame)}${edges(heat.outlines, frame)}</g>`,
+    `<g id="half">${bodies(heat, frame)}${colours(heat, scale, frame)}${edges(heat.outlines, frame)}</g>`,
     `<use href="#half" transform="scale(-1 1)"/>`,
     axes(frame, height, middle - top),
     profile(heat, frame),
     "</g>",
     scale === null ? "" : legend(scale, top),
-    ...notes.map((note, k) => label(40, top + height + 78 + 18 * k, note, `fill="${faint}" font-size="13"`)),
+    ...notes.map((note, k) => label(40, foot + 18 * k, note, `fill="${faint}" font-size="13"`)),
     "</svg>",
   ]
     .filter((line) => line !== "")
@@ -133,27 +139,39 @@ function closedPath(points: Outline["points"], frame: Frame): string {
   return `M${steps.join("L")}z`;
 }
 
-/** What stands behind the colours: parts grey (bores left open), guides hatched. */
-function bodies(outlines: readonly Outline[], frame: Frame): string {
-  const byBody = new Map<string, Outline[]>();
-  for (const outline of outlines) {
-    if (outline.role === "copper") continue;
-    const key = `${outline.role} ${outline.name}`;
-    byBody.set(key, [...(byBody.get(key) ?? []), outline]);
-  }
-  const paths = [...byBody.values()].map((own) => {
-    const data = own.map(({ points }) => closedPath(points, frame)).join("");
-    return `<path d="${data}" fill="${own[0]!.role === "guide" ? "url(#guide)" : "#dcd8ce"}"/>`;
+/** What stands behind the colours (bores left open): guides hatched, what takes no heat grey, the rest as the coldest colour. */
+function bodies({ outlines, density, outline }: HeatMap, frame: Frame): string {
+  const warm = new Set<number>();
+  density.forEach((value, cell) => {
+    if (value > 0) warm.add(outline[cell]!);
+  });
+  const byBody = new Map<string, { role: Outline["role"]; data: string; warm: boolean }>();
+  outlines.forEach(({ role, name, points }, k) => {
+    const key = `${role} ${name}`;
+    const before = byBody.get(key);
+    byBody.set(key, {
+      role,
+      data: (before?.data ?? "") + closedPath(points, frame),
+      warm: (before?.warm ?? false) || warm.has(k),
+    });
+  });
+  const paths = [...byBody.values()].map((body) => {
+    const fill = body.role === "guide" ? "url(#guide)" : body.warm ? heatColour(0) : cold;
+    return `<path d="${body.data}" fill="${fill}"/>`;
   });
   return `<g ${shrink} fill-rule="evenodd">${paths.join("")}</g>`;
 }
 
 /** Cells by colour, neighbours of one colour joined; a hairline of the same colour closes the seams between colours. */
-function colours({ corners, density }: HeatMap, scale: HeatScale | null, frame: Frame): string {
+function colours(
+  { corners, density, outline, outlines }: HeatMap,
+  scale: HeatScale | null,
+  frame: Frame,
+): string {
   if (scale === null) return "";
   const byShade: [number, number][][][] = Array.from({ length: shades }, () => []);
   density.forEach((value, cell) => {
-    if (value <= 0) return;
+    if (value <= 0 || outlines[outline[cell]!]!.role === "guide") return;
     const shade = Math.min(shades - 1, Math.floor(shades * position(scale, value)));
     const at = 8 * cell;
     byShade[shade]!.push([0, 2, 4, 6].map((k) => step(corners[at + k]!, corners[at + k + 1]!, frame)));
@@ -163,7 +181,7 @@ function colours({ corners, density }: HeatMap, scale: HeatScale | null, frame: 
     const colour = heatColour((shade + 0.5) / shades);
     return data === "" ? "" : `<path d="${data}" fill="${colour}" stroke="${colour}"/>`;
   });
-  return `<g ${shrink} stroke-width="${0.3 * fine}" stroke-linejoin="round">${paths.join("")}</g>`;
+  return `<g ${shrink} stroke-width="${0.5 * fine}" stroke-linejoin="round">${paths.join("")}</g>`;
 }
 
 function edges(outlines: readonly Outline[], frame: Frame): string {
@@ -209,39 +227,79 @@ function axes(frame: Frame, height: number, above: number): string {
   return parts.join("\n");
 }
 
-/** Beside the drawing, at the same heights: the parts' power per height, as a filled curve. */
-function profile(heat: HeatMap, { scale, zMin, zMax }: Frame): string {
-  const bins = Math.max(8, Math.round(((zMax - zMin) * scale) / 3));
-  const power = powerPerHeight(heat, zMin, zMax, bins);
+/** Whether the drawing lies so flat that the radius tells more than the height. */
+function isFlat({ scale, zMin, zMax }: Frame): boolean {
+  return (zMax - zMin) * scale < 220;
+}
+
+/** The parts' power along the height, beside the drawing at the same heights; of flat designs along the radius, below it. */
+function profile(heat: HeatMap, frame: Frame): string {
+  const { scale, rMax, zMin, zMax } = frame;
+  const flat = isFlat(frame);
+  const [along, from, to] = flat ? (["r", 0, rMax] as const) : (["z", zMin, zMax] as const);
+  const count = Math.max(8, Math.round(((to - from) * scale) / 3));
+  const power = powerPerLength(heat, { along, from, to, count });
   const largest = Math.max(...power);
   if (largest === 0) return "";
+  const ends = Array.from({ length: count + 1 }, (_, k) => (from + (k / count) * (to - from)) * scale);
+  const lengths = Array.from(power, (value) => (profileLength * value) / largest);
+  const words = [
+    `parts' heat per ${flat ? "radius" : "height"}`,
+    `at most ${plain(largest * 1e-2, 3)} W/cm`,
+  ] as const;
+  return flat ? belowDrawing(ends, lengths, words, -zMin * scale) : besideDrawing(ends, lengths, words);
+}
+
+type Words = readonly [string, string];
+const profileFill = `fill="${heatColour(0.62)}" fill-opacity="0.75"`;
+
+/** Bars to the right of a line; `ends` are heights above z = 0, px. */
+function besideDrawing(ends: readonly number[], lengths: readonly number[], words: Words): string {
   const x = page.boxWidth / 2 + 26;
-  const y = (bin: number): string => num(-(zMin + (bin / bins) * (zMax - zMin)) * scale);
-  let data = `M${x} ${y(0)}`;
-  power.forEach((value, bin) => {
-    data += `H${num(x + (profileWidth * value) / largest)}V${y(bin + 1)}`;
-  });
-  const head = -zMax * scale;
+  const steps = lengths.map((length, k) => `H${num(x + length)}V${num(-ends[k + 1]!)}`).join("");
+  const top = -ends.at(-1)!;
   return [
-    `<path d="${data}H${x}z" fill="${heatColour(0.62)}" fill-opacity="0.75"/>`,
-    `<path d="M${x} ${y(0)}V${y(bins)}" stroke="${faint}"/>`,
-    label(x, head - 24, "parts' heat per height", 'font-size="12"'),
-    label(x, head - 8, `longest: ${plain(largest * 1e-2, 3)} W/cm`, `font-size="12" fill="${faint}"`),
+    `<path d="M${x} ${num(-ends[0]!)}${steps}H${x}z" ${profileFill}/>`,
+    `<path d="M${x} ${num(-ends[0]!)}V${num(top)}" stroke="${faint}"/>`,
+    label(x, top - 24, words[0], 'font-size="12"'),
+    label(x, top - 8, words[1], `font-size="12" fill="${faint}"`),
+  ].join("\n");
+}
+
+/** Bars standing on a line under the radius scale, on both sides of the axis; `ends` are radii, px. */
+function belowDrawing(
+  ends: readonly number[],
+  lengths: readonly number[],
+  words: Words,
+  bottom: number,
+): string {
+  const y = bottom + flatRoom - 8;
+  const side = (sign: 1 | -1): string => {
+    const steps = lengths.map((length, k) => `V${num(y - length)}H${num(sign * ends[k + 1]!)}`).join("");
+    return `<path d="M0 ${num(y)}${steps}V${num(y)}z" ${profileFill}/>`;
+  };
+  const half = num(ends.at(-1)!);
+  const x = page.boxWidth / 2 + 26;
+  return [
+    side(1),
+    side(-1),
+    `<path d="M-${half} ${num(y)}H${half}" stroke="${faint}"/>`,
+    label(x, y - 16, words[0], 'font-size="12"'),
+    label(x, y, words[1], `font-size="12" fill="${faint}"`),
   ].join("\n");
 }
 
 /** The colour bar at the right, in W/cm³. */
 function legend(scale: HeatScale, top: number): string {
   const x = page.left + page.boxWidth + 176;
-  const length = 288;
   const first = top;
-  const slice = length / shades;
+  const slice = legendLength / shades;
   const bars = Array.from({ length: shades }, (_, k) => {
-    const y = first + length - (k + 1) * slice;
-    return `<rect x="${x}" y="${num(y)}" width="22" height="${num(slice + 0.4)}" fill="${heatColour((k + 0.5) / shades)}"/>`;
+    const y = first + legendLength - (k + 1) * slice;
+    return `<rect x="${x}" y="${num(y)}" width="22" height="${num(k === 0 ? slice : slice + 1)}" fill="${heatColour((k + 0.5) / shades)}"/>`;
   });
   const ticks = marks(scale).map((density) => {
-    const y = first + length * (1 - position(scale, density));
+    const y = first + legendLength * (1 - position(scale, density));
     return (
       `<path d="M${x + 22} ${num(y)}h5" stroke="${faint}"/>` +
       label(x + 32, y + 4, plain(density * 1e-6, 3), 'font-size="12"')

@@ -1,7 +1,7 @@
 /** The result document as a table for people: aligned, with units and bars, 80 columns wide. Pure: result in, text out. */
 import { styleText } from "node:util";
 import type { Power, Result, Terminal, Uncertain } from "../../meshes/result.ts";
-import { evenly, figure, percent, plain, plainFigure, prefixed, show } from "./figures.ts";
+import { evenly, figure, percent, plain, plainFigure, prefixed, show, type Unit } from "./figures.ts";
 import { type Alignment, columns, wrap } from "./layout.ts";
 import { partSection } from "./part-section.ts";
 import { coilSentence, driveSentence, printable } from "./sentence.ts";
@@ -45,10 +45,15 @@ const safety = wrap(
 );
 
 /** Value and bar of one quantity, for two neighbouring columns. */
-function pair(quantity: Uncertain | null, unit: { factor: number; symbol: string }): [string, string] {
+function pair(quantity: Uncertain | null, unit: Unit): [string, string] {
   if (quantity === null) return ["", ""];
   const { value, bar } = show(quantity, unit);
   return [value, bar === "" ? "" : `± ${bar}`];
+}
+
+/** The column's unit, unless the quantity is so much smaller that its own reads better. */
+function unitFor({ value }: Uncertain, column: Unit, symbol: string): Unit {
+  return value !== 0 && Math.abs(value) * 1000 < column.factor ? prefixed(symbol, [value]) : column;
 }
 
 function terminalLines(empty: Terminal, loaded: Terminal | null): string[] {
@@ -92,7 +97,10 @@ function powerLines(power: Power): string[] {
   const unit = prefixed("W", [power.totalW.value]);
   const share = (q: Uncertain): string =>
     power.totalW.value > 0 ? percent(q.value / power.totalW.value) : "";
-  const row = (label: string, q: Uncertain): string[] => [label, ...pair(q, unit), unit.symbol, share(q)];
+  const row = (label: string, q: Uncertain): string[] => {
+    const own = unitFor(q, unit, "W");
+    return [label, ...pair(q, own), own.symbol, share(q)];
+  };
   const split = columns(
     [
       row("total", power.totalW),
