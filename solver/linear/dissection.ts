@@ -8,7 +8,7 @@
  */
 import { balancedCost, Mover, type SubGraph } from "./moves.ts";
 import { type Graph, neighboursOf } from "./neighbours.ts";
-import type { ElementStructure } from "./structure.ts";
+import { chain, type ElementStructure } from "./structure.ts";
 
 /** A binary tree over the elements; nodes in postorder, the root last. */
 export interface Tree {
@@ -25,9 +25,11 @@ export interface Tree {
 /** Sets this small are not split: a dense front of a few cells is cheaper than more fronts. */
 const LEAF = 4;
 /** Sets below this size are not worth smoothing. */
-const SMOOTH_FROM = 16;
-/** A half holds at least this share of its set. */
-const LEAST_SHARE = 0.3;
+const SMOOTH_FROM = 32;
+/** A half holds at least this share of its set; of small sets more, or leaves would be lopsided. */
+const LEAST_SHARE = 0.2;
+const SMALL = 24;
+const LEAST_SHARE_SMALL = 0.4;
 /** Directions of sweep: angles dπ/SWEEPS in the (x, y) plane. */
 const SWEEPS = 4;
 
@@ -40,8 +42,20 @@ interface Level extends SubGraph {
 
 /** Splits the elements down to leaves. */
 export function dissect(structure: ElementStructure): Tree {
+  if (practice === undefined) {
+    practice = new Dissection(chain(PRACTICE));
+    practice.run();
+  }
   return new Dissection(structure).run();
 }
+
+/**
+ * A small run before the first, kept. V8 compiles a loop that is hot on its first call without knowing the code behind it, and
+ * falls back to the interpreter each time it gets there; and it drops code together with the last object of the
+ * shape it was compiled for. Measured: without this the first analyses of a process take two to four times as long.
+ */
+let practice: Dissection | undefined;
+const PRACTICE = 100;
 
 class Dissection {
   private readonly order: Int32Array;
@@ -95,7 +109,7 @@ class Dissection {
   private bisect(level: Level, lo: number, hi: number): number {
     const { side } = this.mover;
     const n = hi - lo;
-    const least = Math.max(1, Math.floor(n * LEAST_SHARE));
+    const least = Math.max(1, Math.floor(n * (n < SMALL ? LEAST_SHARE_SMALL : LEAST_SHARE)));
     let best = this.sweep(level, 0, lo, hi, least);
     let direction = 0;
     for (let d = 1; d < SWEEPS; d++) {
@@ -140,23 +154,29 @@ class Dissection {
 
   /** Copies the two halves of a set from one level to the next, without the edges between them. */
   private descend(level: Level, next: Level, lo: number, middle: number, hi: number): void {
+    this.aim(lo, middle, hi);
+    for (let d = 0; d < SWEEPS; d++) this.copyList(level.lists[d], next.lists[d], lo, middle, hi);
+    this.copyEdges(level, next, lo, hi);
+  }
+
+  private aim(lo: number, middle: number, hi: number): void {
     const { target } = this;
     const { side } = this.mover;
     let a = lo;
     let b = middle;
     for (let i = lo; i < hi; i++) target[i] = side[i] === 0 ? a++ : b++;
-    for (let d = 0; d < SWEEPS; d++) {
-      const list = level.lists[d];
-      const copy = next.lists[d];
-      a = lo;
-      b = middle;
-      for (let i = lo; i < hi; i++) {
-        const j = list[i];
-        if (side[j] === 0) copy[a++] = target[j];
-        else copy[b++] = target[j];
-      }
+  }
+
+  private copyList(list: Int32Array, copy: Int32Array, lo: number, middle: number, hi: number): void {
+    const { target } = this;
+    const { side } = this.mover;
+    let a = lo;
+    let b = middle;
+    for (let i = lo; i < hi; i++) {
+      const j = list[i];
+      if (side[j] === 0) copy[a++] = target[j];
+      else copy[b++] = target[j];
     }
-    this.copyEdges(level, next, lo, hi);
   }
 
   private copyEdges(level: Level, next: Level, lo: number, hi: number): void {

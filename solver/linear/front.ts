@@ -9,30 +9,23 @@ export interface FactorNumbers {
   readonly inverseIm: Float64Array;
 }
 
-/** Where one front lies: indices into the workspace's numbers. */
+/** How a front of n rows lies from its first number on: square, by columns, one spare column. */
 export interface FrontLayout {
   /** Numbers from one column to the next: the rows, rounded up to whole tiles. */
   readonly leading: number;
-  /** Index of the imaginary parts; the real parts begin at 0. */
+  /** From a real part to its imaginary part. */
   readonly imag: number;
-  /** Indices of the kernel's packed L and W, of 1/D (pairs re, im), and of what lies behind. */
-  readonly packL: number;
-  readonly packW: number;
-  readonly inverse: number;
-  readonly end: number;
+  readonly size: number;
 }
 
-/** The layout of a front of n rows: square, one spare column, whole tiles. */
+/** The layout of a front of n rows. */
 export function layoutOf(n: number): FrontLayout {
   const leading = (n + 3) & ~3;
   const imag = leading * (n + 1);
-  const packL = (2 * imag + 7) & ~7;
-  const packW = packL + 2 * leading * BLOCK;
-  const inverse = packW + 2 * leading * BLOCK;
-  return { leading, imag, packL, packW, inverse, end: inverse + 2 * n + 2 };
+  return { leading, imag, size: 2 * imag };
 }
 
-/** The kernel with its memory. */
+/** The kernel with its memory: room for two fronts, a child and its parent. Indices into `numbers`. */
 export interface Workspace {
   /** See `kernelModule`; addresses in bytes. */
   readonly run: (
@@ -45,56 +38,89 @@ export interface Workspace {
     n: number,
     p: number,
   ) => number;
-  /** The memory as numbers. Stale after the next call of `frontWorkspace`. */
   readonly numbers: Float64Array;
+  /** The most rows of a front. */
+  readonly rows: number;
+  readonly areas: readonly [number, number];
+  /** The kernel's packed L and W, and 1/D (pairs re, im). */
+  readonly packL: number;
+  readonly packW: number;
+  readonly inverse: number;
 }
 
-interface WasmMemory {
-  readonly buffer: ArrayBuffer;
-  grow(pages: number): number;
-}
 declare const WebAssembly: {
+  Memory: new (size: { initial: number }) => { readonly buffer: ArrayBuffer };
   Module: new (code: Uint8Array) => object;
-  Instance: new (module: object) => { readonly exports: { run: Workspace["run"]; memory: WasmMemory } };
+  Instance: new (
+    module: object,
+    host: { host: { memory: object } },
+  ) => { readonly exports: { readonly run: Workspace["run"] } };
 };
 
 const PAGE = 65536;
-/** Kept for the life of the process: it grows to the largest front met and is reused. */
-let instance: { readonly run: Workspace["run"]; readonly memory: WasmMemory } | undefined;
-let numbers = new Float64Array(0);
-
-/** The kernel, with room for fronts up to n rows. Contents are whatever the last user left. */
-export function frontWorkspace(n: number): Workspace {
-  instance ??= new WebAssembly.Instance(new WebAssembly.Module(kernelModule())).exports;
-  const missing = layoutOf(n).end * 8 - instance.memory.buffer.byteLength;
-  if (missing > 0) instance.memory.grow(Math.ceil(missing / PAGE));
-  if (numbers.buffer !== instance.memory.buffer) numbers = new Float64Array(instance.memory.buffer);
-  return { run: instance.run, numbers };
-}
+/** Kept for the life of the process: the compiled kernel, and a memory as large as the largest front met. */
+let compiled: object | undefined;
+let space: Workspace | undefined;
 
 /**
- * Eliminates the first p of n rows of the front in the workspace. Entries of L go to `out` from index `entry`, 1/D from index `pivot`.
+ * The kernel, with room for fronts up to n rows; contents are whatever the last user left. A memory too small is replaced, not grown:
+ * growing detaches its buffer, and at the first detached buffer V8 throws away all code compiled for typed arrays.
+ */
+export function frontWorkspace(n: number): Workspace {
+  if (space !== undefined && space.rows >= n) return space;
+  const rows = Math.ceil(Math.max(n, 1.2 * (space?.rows ?? 0)));
+  const { leading, size } = layoutOf(rows);
+  const packL = (2 * size + 7) & ~7;
+  const packW = packL + 2 * leading * BLOCK;
+  const inverse = packW + 2 * leading * BLOCK;
+  compiled ??= new WebAssembly.Module(kernelModule());
+  const memory = new WebAssembly.Memory({ initial: Math.ceil((8 * (inverse + 2 * rows + 2)) / PAGE) });
+  const { run } = new WebAssembly.Instance(compiled, { host: { memory } }).exports;
+  space = { run, numbers: new Float64Array(memory.buffer), rows, areas: [0, size], packL, packW, inverse };
+  return space;
+}
+
+/** C = 0, where it will be read: whole columns of small fronts, of large ones what lies below the diagonal tile's top. */
+export function clearFront(c: Float64Array, area: number, n: number): void {
+  const { leading, imag, size } = layoutOf(n);
+  if (n < LARGE) {
+    c.fill(0, area, area + size);
+    return;
+  }
+  for (let j = 0; j <= n; j++) {
+    const from = area + j * leading + (j & ~3);
+    const to = area + (j + 1) * leading;
+    c.fill(0, from, to);
+    c.fill(0, imag + from, imag + to);
+  }
+}
+const LARGE = 200;
+
+/**
+ * Eliminates the first p of n rows of the front at `area`. Entries of L go to `out` from index `entry`, 1/D from index `pivot`.
  * Returns −1, or the pivot (counted within the front; the first of its pair) that is zero or not finite.
  */
 export function eliminate(
   space: Workspace,
+  area: number,
   n: number,
   p: number,
   out: FactorNumbers,
   entry: number,
   pivot: number,
 ): number {
-  const { leading, imag, packL, packW, inverse } = layoutOf(n);
-  const c = space.numbers;
-  const bad = space.run(0, 8 * imag, 8 * leading, 8 * packL, 8 * packW, 8 * inverse, n, p);
+  const { leading, imag } = layoutOf(n);
+  const { numbers: c, inverse } = space;
+  const bad = space.run(8 * area, 8 * imag, 8 * leading, 8 * space.packL, 8 * space.packW, 8 * inverse, n, p);
   if (bad >= 0) return bad;
   const { re, im } = out;
   let e = entry;
   for (let k = 0; k < p; k++) {
     out.inverseRe[pivot + k] = c[inverse + 2 * k];
     out.inverseIm[pivot + k] = c[inverse + 2 * k + 1];
-    const end = k * leading + n;
-    for (let i = k * leading + k + 1; i < end; i++) {
+    const column = area + k * leading;
+    const end = column + n;
+    for (let i = column + k + 1; i < end; i++) {
       re[e] = c[i];
       im[e] = c[imag + i];
       e++;

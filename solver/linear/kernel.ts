@@ -66,7 +66,7 @@ const ONE = 1;
 const TWO = 2;
 const ELIMINATE = 3;
 
-/** The module: exports `memory` and `run(c, plane, column, packL, packW, inverse, n, p)` → −1 or the pivot that is zero or not finite. */
+/** The module: exports `run(c, plane, column, packL, packW, inverse, n, p)` → −1 or the pivot that is zero or not finite. */
 export function kernelModule(): Uint8Array {
   return moduleOf([update(), columns(1), columns(2), eliminate()], ELIMINATE);
 }

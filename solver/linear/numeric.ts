@@ -1,8 +1,11 @@
-/** A = L D Lᵀ, front by front: assemble the cells or the children's remainders, eliminate, put the remainder on a stack. */
+/**
+ * A = L D Lᵀ, front by front: assemble the cells or the two children's remainders, eliminate. The remainder of a left child waits on a
+ * stack; a right child's is fetched where it lies, for its parent comes next.
+ */
 import { SolverError } from "../errors.ts";
-import { eliminate, type FactorNumbers, frontWorkspace, layoutOf } from "./front.ts";
+import { clearFront, eliminate, type FactorNumbers, frontWorkspace, layoutOf } from "./front.ts";
 import type { ElementStructure, ElementValues } from "./structure.ts";
-import { type Fronts, triangle } from "./symbolic.ts";
+import { type Fronts, isRightChild, triangle } from "./symbolic.ts";
 
 /** Lower triangles by columns, waiting for their parent front. */
 interface Stack {
@@ -32,26 +35,25 @@ export function factoriseFronts(
     inverseIm: new Float64Array(structure.unknowns),
   };
   const stack: Stack = { re: new Float64Array(fronts.stack), im: new Float64Array(fronts.stack), top: 0 };
-  let space = frontWorkspace(fronts.largest);
+  const space = frontWorkspace(fronts.largest);
+  const c = space.numbers;
   let pivot = 0;
   let told = 0;
   for (let f = 0; f < count; f++) {
-    const n = rows[f];
-    const c = space.numbers;
-    c.fill(0, 0, 2 * layoutOf(n).imag);
-    if (tree.left[f] < 0) assembleLeaf(structure, valueStart, fronts, values, f, c);
+    const area = space.areas[f & 1];
+    clearFront(c, area, rows[f]);
+    if (tree.left[f] < 0) assembleLeaf(structure, valueStart, fronts, values, f, c, area);
     else {
-      extendAdd(fronts, stack, tree.right[f], n, c);
-      extendAdd(fronts, stack, tree.left[f], n, c);
+      addNeighbour(fronts, f, c, space.areas[(f - 1) & 1], area);
+      addWaiting(fronts, stack, f, c, area);
     }
-    const bad = eliminate(space, n, pivots[f], out, entryStart[f], pivot);
+    const bad = eliminate(space, area, rows[f], pivots[f], out, entryStart[f], pivot);
     if (bad >= 0) throw singular(fronts, pivot + bad);
     pivot += pivots[f];
-    keepRemainder(stack, n, pivots[f], c);
+    if (!isRightChild(tree, f)) keepRemainder(fronts, stack, f, c, area);
     if (onProgress !== undefined && (f + 1 === count || work[f + 1] - told >= work[count] / REPORTS)) {
       told = work[f + 1];
       onProgress(told / work[count]);
-      space = frontWorkspace(fronts.largest);
     }
   }
   return out;
@@ -70,6 +72,7 @@ function assembleLeaf(
   values: ElementValues,
   f: number,
   c: Float64Array,
+  area: number,
 ): void {
   const { tree, placeOfId } = fronts;
   const { leading, imag } = layoutOf(fronts.rows[f]);
@@ -81,7 +84,7 @@ function assembleLeaf(
       const a = placeOfId[i];
       for (let j = start[e]; j <= i; j++) {
         const b = placeOfId[j];
-        const at = a > b ? b * leading + a : a * leading + b;
+        const at = area + (a > b ? b * leading + a : a * leading + b);
         c[at] += values.re[v];
         c[imag + at] += values.im[v];
         v++;
@@ -90,17 +93,38 @@ function assembleLeaf(
   }
 }
 
-/** C += the remainder of child g, taken from the top of the stack. */
-function extendAdd(fronts: Fronts, stack: Stack, g: number, n: number, c: Float64Array): void {
+/** C += the remainder of f's right child, still where it was eliminated: it comes right before f. */
+function addNeighbour(fronts: Fronts, f: number, c: Float64Array, from: number, area: number): void {
   const { rowInParent, rowStart } = fronts;
-  const { leading, imag } = layoutOf(n);
+  const g = f - 1;
+  const source = layoutOf(fronts.rows[g]);
+  const { leading, imag } = layoutOf(fronts.rows[f]);
+  const p = fronts.pivots[g];
+  const n = fronts.rows[g];
+  const first = rowStart[g];
+  for (let j = p; j < n; j++) {
+    const column = area + rowInParent[first + j] * leading;
+    const s = from + j * source.leading;
+    for (let i = j; i < n; i++) {
+      const at = column + rowInParent[first + i];
+      c[at] += c[s + i];
+      c[imag + at] += c[s + source.imag + i];
+    }
+  }
+}
+
+/** C += the remainder of f's left child, taken from the top of the stack. */
+function addWaiting(fronts: Fronts, stack: Stack, f: number, c: Float64Array, area: number): void {
+  const { rowInParent, rowStart } = fronts;
+  const g = fronts.tree.left[f];
+  const { leading, imag } = layoutOf(fronts.rows[f]);
   const first = rowStart[g] + fronts.pivots[g];
   const last = rowStart[g + 1];
   const { re, im } = stack;
   stack.top -= triangle(last - first);
   let s = stack.top;
   for (let j = first; j < last; j++) {
-    const column = rowInParent[j] * leading;
+    const column = area + rowInParent[j] * leading;
     for (let i = j; i < last; i++) {
       const at = column + rowInParent[i];
       c[at] += re[s];
@@ -111,12 +135,13 @@ function extendAdd(fronts: Fronts, stack: Stack, g: number, n: number, c: Float6
 }
 
 /** Puts the rows beyond the pivots on the stack. */
-function keepRemainder(stack: Stack, n: number, p: number, c: Float64Array): void {
+function keepRemainder(fronts: Fronts, stack: Stack, f: number, c: Float64Array, area: number): void {
+  const n = fronts.rows[f];
   const { leading, imag } = layoutOf(n);
   const { re, im } = stack;
   let s = stack.top;
-  for (let j = p; j < n; j++) {
-    const column = j * leading;
+  for (let j = fronts.pivots[f]; j < n; j++) {
+    const column = area + j * leading;
     for (let i = j; i < n; i++) {
       re[s] = c[column + i];
       im[s] = c[imag + column + i];

@@ -20,6 +20,17 @@ export interface ElementValues {
   readonly im: Float64Array;
 }
 
+/** A chain of elements of two unknowns each, at points without order. */
+export function chain(elements: number): ElementStructure {
+  return {
+    unknowns: elements + 1,
+    start: Int32Array.from({ length: elements + 1 }, (_, e) => 2 * e),
+    ids: Int32Array.from({ length: 2 * elements }, (_, i) => (i + 1) >> 1),
+    x: Float64Array.from({ length: elements }, (_, e) => (e * 37) % elements),
+    y: Float64Array.from({ length: elements }, (_, e) => (e * 61) % elements),
+  };
+}
+
 /** Throws SolverError `structure` unless the arrays describe a matrix without empty rows. */
 export function checkStructure(structure: ElementStructure): void {
   const { unknowns, start, ids, x, y } = structure;

@@ -34,7 +34,7 @@ export interface Fronts {
   readonly work: Float64Array;
   /** Largest number of rows of a front. */
   readonly largest: number;
-  /** Most numbers waiting between fronts. */
+  /** Most numbers waiting on the stack of left children's remainders. */
   readonly stack: number;
 }
 
@@ -185,12 +185,16 @@ class RowLists {
   }
 }
 
+/** Kept for the sake of the compiler, as the practice in dissection.ts. */
+let practice: RowLists | undefined;
+
 function rowLists(
   structure: ElementStructure,
   tree: Tree,
   pivots: Int32Array,
   newNumber: Int32Array,
 ): RowLists {
+  if (practice === undefined) practice = new RowLists(0, 0);
   const lists = new RowLists(pivots.length, structure.ids.length);
   const place = new Int32Array(structure.unknowns).fill(-1);
   for (let f = 0; f < pivots.length; f++) {
@@ -219,12 +223,17 @@ function totals(
     entryStart[f + 1] = entryStart[f] + p * rest + (p * (p - 1)) / 2;
     work[f + 1] = work[f] + (n * (n + 1) * (n + 2) - rest * (rest + 1) * (rest + 2)) / 6;
     largest = Math.max(largest, n);
-    for (const child of [tree.left[f], tree.right[f]])
-      if (child >= 0) waiting -= triangle(rows[child] - pivots[child]);
-    waiting += triangle(rest);
+    const left = tree.left[f];
+    if (left >= 0) waiting -= triangle(rows[left] - pivots[left]);
+    if (!isRightChild(tree, f)) waiting += triangle(rest);
     stack = Math.max(stack, waiting);
   }
   return { entryStart, work, largest, stack };
+}
+
+/** Whether f is the right child of the front after it. */
+export function isRightChild(tree: Tree, f: number): boolean {
+  return tree.right[f + 1] === f;
 }
 
 /** Numbers in a lower triangle of order n. */

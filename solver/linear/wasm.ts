@@ -35,7 +35,7 @@ export class FunctionBuilder {
   }
 }
 
-/** The module's bytes: functions by index, `exported` names the index of the one function exported as `run`, beside `memory`. */
+/** The module's bytes: functions by index, `exported` the one exported as `run`; the memory is imported as `host.memory`. */
 export function moduleOf(
   functions: readonly { readonly builder: FunctionBuilder; readonly code: Code }[],
   exported: number,
@@ -50,9 +50,9 @@ export function moduleOf(
   return Uint8Array.from([
     ...[0x00, 0x61, 0x73, 0x6d, 1, 0, 0, 0],
     ...section(1, [count, ...types]),
+    ...section(2, [1, ...name("host"), ...name("memory"), 2, 0, 1]),
     ...section(3, [count, ...functions.keys()]),
-    ...section(5, [1, 0, 1]),
-    ...section(7, [2, ...name("memory"), 2, 0, ...name("run"), 0, exported]),
+    ...section(7, [1, ...name("run"), 0, exported]),
     ...section(10, [count, ...functions.flatMap(({ code }) => code)]),
   ]);
 }
