@@ -72,13 +72,14 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     body.role === "part" ? [figuresOf(working, body, built.regionOfBody(b))] : [],
   );
   const table = new Table();
-  addTerminals(table, "empty", empty);
-  if (loaded !== null) addTerminals(table, "loaded", loaded);
-  addPowers(table, scene, built, working);
+  addTerminals(table, "empty", empty, orderOf(scene.bodies.filter((b) => b.role === "guide")));
+  const order = orderOf(scene.bodies);
+  if (loaded !== null) addTerminals(table, "loaded", loaded, order);
+  addPowers(table, scene, built, working, partFigures, order);
   partFigures.forEach((p, i) => {
-    addPart(table, p, i);
+    addPart(table, p, i, order);
   });
-  addStray(table, scene, working);
+  addStray(table, scene, working, order);
   const balances = [empty, ...(loaded === null ? [] : [loaded])].map(
     (s) => powerBalance(s.solution, s.losses).active,
   );
@@ -87,6 +88,7 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     unknowns: prepared.system.structure.unknowns,
     values: table.values,
     parts: table.parts,
+    orders: table.orders,
     empty,
     loaded,
     figures: partFigures,
@@ -99,35 +101,57 @@ class Table {
   readonly values = new Map<string, number>();
   readonly parts = new Map<string, readonly number[]>();
 
-  add(name: string, value: number, parts: readonly number[] = [value]): void {
+  readonly orders = new Map<string, number>();
+
+  add(name: string, value: number, order: number, parts: readonly number[] = [value]): void {
     this.values.set(name, value);
+    this.orders.set(name, order);
     this.parts.set(name, parts);
   }
 }
 
-/** R as the sum of the regions' powers, X as that of their energies and the energy outside. */
-function addTerminals(table: Table, state: State, { solution, losses }: Solved): void {
-  const { re, im } = solution.impedance;
-  table.add(`${state}.R`, re, [...losses.regionPower]);
-  const reactive = [...losses.regionEnergy, losses.exteriorEnergy].map((w) => 2 * solution.omega * w);
-  table.add(`${state}.X`, im, reactive);
+/** Order at which powers and energies converge at least: slower where magnetic bodies have sharp edges. */
+function orderOf(bodies: readonly Body[]): number {
+  const sharp = bodies.some(
+    (b) => b.material.relativePermeability > 1 && b.pieces.some((p) => p.kind === "polygon"),
+  );
+  return sharp ? 4 / 3 : 2;
 }
 
-function addPowers(table: Table, scene: Scene, built: Built, { losses }: Solved): void {
-  const of = (wanted: (b: Body) => boolean): number[] =>
-    scene.bodies.flatMap((b, i) => (wanted(b) ? [losses.regionPower[built.regionOfBody(i)] ?? 0] : []));
-  const isHeated = (b: Body): boolean => b.role === "part" && b.heated;
+/** Order of densities and surface fields. */
+const LOCAL_ORDER = 1;
+
+/** R as the sum of the regions' powers, X as that of their energies and the energy outside. */
+function addTerminals(table: Table, state: State, { solution, losses }: Solved, order: number): void {
+  const { re, im } = solution.impedance;
+  table.add(`${state}.R`, re, order, [...losses.regionPower]);
+  const reactive = [...losses.regionEnergy, losses.exteriorEnergy].map((w) => 2 * solution.omega * w);
+  table.add(`${state}.X`, im, order, reactive);
+}
+
+/** Powers of coil, heated parts and the rest, each part by its slices. */
+function addPowers(
+  table: Table,
+  scene: Scene,
+  built: Built,
+  { losses }: Solved,
+  figures: readonly PartFigures[],
+  order: number,
+): void {
+  const slices = (heated: boolean): number[] =>
+    figures.filter((p) => p.body.heated === heated).flatMap((p) => p.slices.map((s) => s * p.power));
+  const guides = scene.bodies.flatMap((b, i) =>
+    b.role === "guide" ? [losses.regionPower[built.regionOfBody(i)] ?? 0] : [],
+  );
   const sums: [string, number[]][] = [
     ["coil", [...losses.turnPower]],
-    ["heated", of(isHeated)],
-    ["other", of((b) => !isHeated(b))],
+    ["heated", slices(true)],
+    ["other", [...slices(false), ...guides]],
   ];
-  for (const [name, powers] of sums)
-    table.add(
-      name,
-      powers.reduce((a, b) => a + b, 0),
-      powers,
-    );
+  for (const [name, powers] of sums) {
+    const total = powers.reduce((a, b) => a + b, 0);
+    table.add(name, total, order, powers);
+  }
 }
 
 function figuresOf({ solution, losses }: Solved, body: Body, region: number): PartFigures {
@@ -148,22 +172,23 @@ function figuresOf({ solution, losses }: Solved, body: Body, region: number): Pa
   };
 }
 
-function addPart(table: Table, p: PartFigures, i: number): void {
+function addPart(table: Table, p: PartFigures, i: number, order: number): void {
   table.add(
     `part${i}.power`,
     p.power,
+    order,
     p.slices.map((s) => s * p.power),
   );
-  table.add(`part${i}.surfaceH`, p.surfaceH);
-  table.add(`part${i}.peak`, p.peak);
+  table.add(`part${i}.surfaceH`, p.surfaceH, LOCAL_ORDER);
+  table.add(`part${i}.peak`, p.peak, LOCAL_ORDER);
 }
 
-function addStray(table: Table, scene: Scene, { solution }: Solved): void {
+function addStray(table: Table, scene: Scene, { solution }: Solved, order: number): void {
   if (scene.strayPoints.length === 0) return;
   const probe = makeProbe(solution);
   scene.strayPoints.forEach(([r, z], i) => {
     const { br, bz } = probe(r, z);
     const components = [br.re, br.im, bz.re, bz.im];
-    table.add(`stray${i}`, Math.hypot(...components), components);
+    table.add(`stray${i}`, Math.hypot(...components), order, components);
   });
 }

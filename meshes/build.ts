@@ -190,13 +190,19 @@ function touchesPlane(shape: Shape): boolean {
 }
 
 function sceneTraits(scene: Scene, size: number): RegionTraits[] {
-  const air: RegionTraits = { skinDepth: Infinity, wall: 0, active: false };
+  const air: RegionTraits = { skinDepth: Infinity, wall: 0, active: false, magnetic: false };
   const copperSkin = skinDepth(scene.conductor, scene.frequency) / size;
-  const turn: RegionTraits = { skinDepth: copperSkin, wall: scene.section.wall / size, active: true };
+  const turn: RegionTraits = {
+    skinDepth: copperSkin,
+    wall: scene.section.wall / size,
+    active: true,
+    magnetic: false,
+  };
   const body = (b: Body): RegionTraits => ({
     skinDepth: skinDepth(b.material, scene.frequency) / size,
     wall: 0,
     active: b.material.resistivity !== null || b.material.relativePermeability !== 1,
+    magnetic: b.material.relativePermeability > 1,
   });
   return [air, ...scene.turns.map(() => turn), ...scene.bodies.map(body)];
 }

@@ -56,6 +56,10 @@ export function leadPair(scene: Scene): LeadPair {
         ["X", impedance.im],
       ]),
       parts: new Map(),
+      orders: new Map([
+        ["R", 2],
+        ["X", 2],
+      ]),
     };
   };
   const { finest, bars } = refine(

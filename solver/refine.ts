@@ -1,10 +1,11 @@
 /**
  * Solves on nested grids until the asked accuracy holds, and says how far each number may be from the truth.
  *
- * bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) / ((n/m)² − 1), levels m < n the last two, c_i the parts q is the sum of.
- * An error that falls at least as h² is bounded by it (Richardson); smooth fields fall as h⁴, sharp corners slower, and where
- * the two cancel in q_n − q_m by chance they do not in every part c_i. The grid reaches to infinity, so there is no outer boundary
- * to allow for; the direct solution's own error is far below (its residual is reported).
+ * bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) / ((n/m)^p − 1), levels m < n the last two, c_i the parts q is the sum of.
+ * An error that falls at least as h^p is bounded by it (Richardson). Smooth fields fall as h⁴ in powers and energies; p = 2 allows for
+ * conductors' edges, 4/3 for sharp edges of magnetic bodies (field ∝ distance^(−1/3), energy h^(4/3)), 1 for values at a place. Where two
+ * parts of the error cancel in q_n − q_m by chance they do not in every c_i. The grid reaches to infinity, so there is no outer boundary to
+ * allow for; the direct solution's own error is far below (its residual is reported).
  */
 
 /** What one grid says. */
@@ -16,6 +17,8 @@ export interface GridAnswer {
   readonly values: ReadonlyMap<string, number>;
   /** Parts whose sum a value is, where it has any. */
   readonly parts: ReadonlyMap<string, readonly number[]>;
+  /** Order p at which each value's error falls at least. */
+  readonly orders: ReadonlyMap<string, number>;
 }
 
 export interface Refined<T extends GridAnswer> {
@@ -28,11 +31,11 @@ export interface Refined<T extends GridAnswer> {
 
 /** Bars of a finer answer from the one before it. */
 export function barsBetween(coarse: GridAnswer, fine: GridAnswer): Map<string, number> {
-  const shrink = (fine.level / coarse.level) ** 2 - 1;
   const bars = new Map<string, number>();
   for (const [name, value] of fine.values) {
     const before = coarse.values.get(name) ?? Number.NaN;
     const moved = partsMoved(coarse.parts.get(name), fine.parts.get(name));
+    const shrink = (fine.level / coarse.level) ** (fine.orders.get(name) ?? 1) - 1;
     bars.set(name, Math.max(Math.abs(value - before), moved) / shrink);
   }
   return bars;
@@ -43,7 +46,7 @@ function partsMoved(before: readonly number[] | undefined, after: readonly numbe
   return after.reduce((sum, c, i) => sum + Math.abs(c - before[i]), 0);
 }
 
-/** Level to solve next when `bars` must shrink by `factor`: bars fall at least as n⁻², usually as n⁻³ or better. */
+/** Level to solve next when `bars` must shrink by `factor`: bars fall at least as n^−p, usually as n⁻³ or better. */
 export function nextLevel(level: number, factor: number): number {
   return Math.max(level + 1, Math.min(2 * level, Math.ceil(level * factor ** (1 / 3))));
 }

@@ -35,6 +35,7 @@ export interface RegionTraits {
   readonly wall: number;
   /** True where the region conducts or is magnetic: its corners want small cells. */
   readonly active: boolean;
+  readonly magnetic: boolean;
 }
 
 export type Domain =

@@ -17,8 +17,9 @@ import type { Plane } from "./sides.ts";
 
 /** Growth of the cell length per unit of distance, along sides. */
 const GROWTH = 0.5;
-/** First cell at a right-angled corner of a conductor, in skin depths. */
+/** First cell at a right-angled corner of a conductor, in skin depths; of a magnetic one, whose corner field is singular. */
 const CORNER_SKIN = 0.85;
+const CORNER_SKIN_MAGNETIC = 0.45;
 /** First cell at a corner of a magnetic body that does not conduct, in lengths of its shorter side. */
 const CORNER_SHARE = 0.1;
 /** Longest cell on an arc, in radii: about a sixth of a quarter turn on a sphere, less on a wire's far side. */
@@ -102,20 +103,36 @@ function addCorners(plane: Plane, traits: readonly RegionTraits[], field: SizeFi
       for (let j = i + 1; j < meeting.length; j++) {
         const bend = turnBetween(meeting[i], meeting[j], vertex, nodes);
         if (bend < CORNER_ANGLE) continue;
-        const shorter = Math.min(meeting[i].length, meeting[j].length);
-        let h = Infinity;
-        for (const region of [meeting[i].left, meeting[i].right, meeting[j].left, meeting[j].right]) {
-          const trait = traits[region];
-          if (trait === undefined || !trait.active) continue;
-          const own = Number.isFinite(trait.skinDepth)
-            ? CORNER_SKIN * trait.skinDepth
-            : CORNER_SHARE * shorter;
-          h = Math.min(h, own * Math.min(3, Math.PI / 2 / bend));
-        }
-        if (h < Infinity) field.add(nodes.r[vertex], nodes.z[vertex], Math.min(h, 0.35 * shorter));
+        addCorner(field, nodes, vertex, bend, [meeting[i], meeting[j]], traits);
       }
     }
+    if (nodes.r[vertex] === 0 && meeting.length === 1) {
+      const along = Math.abs(sideDirection(meeting[0], nodes, meeting[0].a === vertex ? 0 : 1)[1]);
+      const bend = Math.PI - 2 * Math.acos(Math.min(1, along));
+      if (bend > CORNER_ANGLE) addCorner(field, nodes, vertex, bend, meeting, traits);
+    }
   }
+}
+
+/** A source at a corner (or a tip on the axis) by the finest of the regions that meet there. */
+function addCorner(
+  field: SizeField,
+  nodes: Nodes,
+  vertex: number,
+  bend: number,
+  meeting: readonly Side[],
+  traits: readonly RegionTraits[],
+): void {
+  const shorter = Math.min(...meeting.map((s) => s.length));
+  let h = Infinity;
+  for (const region of meeting.flatMap((s) => [s.left, s.right])) {
+    const trait = traits[region];
+    if (trait === undefined || !trait.active) continue;
+    const first = trait.magnetic ? CORNER_SKIN_MAGNETIC : CORNER_SKIN;
+    const own = Number.isFinite(trait.skinDepth) ? first * trait.skinDepth : CORNER_SHARE * shorter;
+    h = Math.min(h, own * Math.min(3, Math.PI / 2 / bend));
+  }
+  if (h < Infinity) field.add(nodes.r[vertex], nodes.z[vertex], Math.min(h, 0.35 * shorter));
 }
 
 /** Angle by which the path along two sides turns at their common vertex, 0..π. */
