@@ -1,7 +1,8 @@
 /**
  * The field at any point of space.
  *
- * Inside the outer circle: B_r = −ψ_z/r, B_z = 2ψ_s by the shape functions of the cell that holds the point; on the axis B_r = 0.
+ * Inside the outer circle: B_r = −ψ_z/r, B_z = 2ψ_s by the shape functions of the cell that holds the point, second order in the cell's size.
+ * ψ and rψ_z go with s towards the axis, so ψ/S and ψ_z/S are read beside it, where the map is regular.
  * Outside: the poles of multipoles.ts, plus the applied uniform field where there is one.
  */
 import { SolverError } from "../errors.ts";
@@ -72,11 +73,12 @@ function readPlace(solution: Solution, place: Place, r: number): PointField {
   for (let i = 0; i < NODES; i++) s[i] = grid.r[grid.cellNodes[cell * NODES + i]] ** 2;
   shapeAt(kind, xi, eta, MAP);
   fieldAt(kind, touch, s, xi, eta, FIELD);
-  let [sXi, sEta, zXi, zEta] = [0, 0, 0, 0];
+  let [S, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0];
   const re = [0, 0, 0];
   const im = [0, 0, 0];
   for (let i = 0; i < NODES; i++) {
     const node = grid.cellNodes[cell * NODES + i];
+    S += MAP.n[i] * s[i];
     sXi += MAP.dXi[i] * s[i];
     sEta += MAP.dEta[i] * s[i];
     zXi += MAP.dXi[i] * grid.z[node];
@@ -92,11 +94,12 @@ function readPlace(solution: Solution, place: Place, r: number): PointField {
   }
   const det = sXi * zEta - sEta * zXi;
   const bz = ([, a, b]: number[]): number => (2 * (a * zEta - b * zXi)) / det;
-  const br = ([, a, b]: number[]): number => (r === 0 ? 0 : -(b * sXi - a * sEta) / (det * r));
+  const br = ([, a, b]: number[]): number => (-r * (b * sXi - a * sEta)) / (det * S);
+  const psi = ([n]: number[]): number => (n * r * r) / S;
   return {
     br: { re: br(re), im: br(im) },
     bz: { re: bz(re), im: bz(im) },
-    psi: { re: re[0], im: im[0] },
+    psi: { re: psi(re), im: psi(im) },
     cell,
   };
 }

@@ -127,3 +127,103 @@ export const COIL_TURNS = [-1, -1, 0, 1, 2] as const;
 export function coilMaterials(resistivity = 2.5e-7, mu = 20): RegionMaterial[] {
   return [AIR, part(resistivity, mu), copper(0), copper(1), copper(2)];
 }
+
+/**
+ * Half disc of radius R about the origin, cut by half circles of the given radii (ascending, the last is R): region k between
+ * the (k − 1)th and the kth, a square core inside the first. `sectors` patches along the core's three sides each … 4 × sectors in all.
+ */
+export function ballMesh(radii: readonly number[], sectors: number): PatchMesh {
+  const c = radii[0] / 2;
+  const n = sectors;
+  const step = (k: number): number => (2 * c * k) / (2 * n) - c;
+  const r: number[] = [];
+  const z: number[] = [];
+  const corners: number[] = [];
+  const region: number[] = [];
+  for (let j = 0; j <= 2 * n; j++) {
+    for (let i = 0; i <= n; i++) {
+      r.push((c * i) / n);
+      z.push(step(j));
+    }
+  }
+  for (let j = 0; j < 2 * n; j++) {
+    for (let i = 0; i < n; i++) {
+      const k = j * (n + 1) + i;
+      corners.push(k, k + 1, k + n + 2, k + n + 1);
+      region.push(0);
+    }
+  }
+  let inner: number[] = [];
+  for (let i = 0; i <= n; i++) inner.push(i);
+  for (let j = 1; j <= 2 * n; j++) inner.push(j * (n + 1) + n);
+  for (let i = n - 1; i >= 0; i--) inner.push(2 * n * (n + 1) + i);
+  const arcs: ArcOfEdge[] = [];
+  radii.forEach((radius, k) => {
+    const outer = inner.map((_node, i) => {
+      const angle = (Math.PI * i) / (inner.length - 1) - Math.PI / 2;
+      const onAxis = i === 0 || i === inner.length - 1;
+      r.push(onAxis ? 0 : radius * Math.cos(angle));
+      z.push(onAxis ? (i === 0 ? -radius : radius) : radius * Math.sin(angle));
+      return r.length - 1;
+    });
+    for (let i = 0; i + 1 < inner.length; i++) {
+      corners.push(inner[i], outer[i], outer[i + 1], inner[i + 1]);
+      region.push(k);
+      arcs.push({ a: outer[i], b: outer[i + 1], centreR: 0, centreZ: 0, radius });
+    }
+    inner = outer;
+  });
+  const outer = { centreZ: 0, radius: radii[radii.length - 1] };
+  return makePatchMesh(
+    Float64Array.from(r),
+    Float64Array.from(z),
+    Int32Array.from(corners),
+    Int32Array.from(region),
+    arcs,
+    outer,
+  );
+}
+
+/**
+ * A patch mesh whose cells meet the axis in every way: quadrilaterals with a side on it, slanted edges and one corner only, inside a
+ * rectangle [0, 2] × [−1, 1], natural outside.
+ */
+export function slantedMesh(): PatchMesh {
+  const points = [
+    [0, -1],
+    [0, -0.1],
+    [0, 1],
+    [1, -1],
+    [0.8, -0.4],
+    [1.1, 0.3],
+    [0.9, 1],
+    [2, -1],
+    [2, 0.2],
+    [2, 1],
+  ];
+  const quads = [
+    [0, 3, 4, 1],
+    [1, 4, 8, 5],
+    [1, 5, 6, 2],
+    [3, 7, 8, 4],
+    [5, 8, 9, 6],
+  ];
+  return makePatchMesh(
+    Float64Array.from(points, (p) => p[0]),
+    Float64Array.from(points, (p) => p[1]),
+    Int32Array.from(quads.flat()),
+    new Int32Array(quads.length),
+    [],
+    null,
+  );
+}
+
+/** Least-squares slope of log|error| against log(1/level): the observed order of convergence. */
+export function observedOrder(levels: readonly number[], errors: readonly number[]): number {
+  const x = levels.map((n) => Math.log(1 / n));
+  const y = errors.map((e) => Math.log(Math.abs(e)));
+  const mean = (v: readonly number[]): number => v.reduce((a, b) => a + b, 0) / v.length;
+  const [mx, my] = [mean(x), mean(y)];
+  const top = x.reduce((sum, xi, i) => sum + (xi - mx) * (y[i] - my), 0);
+  return top / x.reduce((sum, xi) => sum + (xi - mx) ** 2, 0);
+}

@@ -60,11 +60,11 @@ export function integrateCells(grid: Grid, tick?: (fraction: number) => void): C
   return { kind, touch, stiffness, mass, leastJacobian, exteriorStiffness };
 }
 
-const gs = new Float64Array(NODES);
-const gz = new Float64Array(NODES);
-const nn = new Float64Array(NODES);
+const GS = new Float64Array(NODES * POINTS);
+const GZ = new Float64Array(NODES * POINTS);
+const NN = new Float64Array(NODES * POINTS);
 
-/** K and M of one cell, added at `at`; returns least over mean determinant. Long because it is the hot loop of a grid. */
+/** K and M of one cell at `at`; returns least over mean determinant. Long because it is the hot loop of a grid. */
 function integrateCell(
   tables: CellTables,
   s: Float64Array,
@@ -103,22 +103,33 @@ function integrateCell(
     for (let i = 0; i < NODES; i++) {
       const a = field.dXi[q + i];
       const b = field.dEta[q + i];
-      gs[i] = fs * (a * zEta - b * zXi);
-      gz[i] = fz * (b * sXi - a * sEta);
-      nn[i] = fn * field.n[q + i];
-    }
-    let k = at;
-    for (let i = 0; i < NODES; i++) {
-      const a = gs[i];
-      const b = gz[i];
-      const c = nn[i];
-      for (let j = 0; j <= i; j++) {
-        stiffness[k] += a * gs[j] + b * gz[j];
-        mass[k++] += c * nn[j];
-      }
+      GS[i * POINTS + p] = fs * (a * zEta - b * zXi);
+      GZ[i * POINTS + p] = fz * (b * sXi - a * sEta);
+      NN[i * POINTS + p] = fn * field.n[q + i];
     }
   }
+  addProducts(GS, stiffness, at);
+  addProducts(GZ, stiffness, at);
+  addProducts(NN, mass, at);
   return (4 * least) / Math.abs(area);
+}
+
+/** out_ij += Σ_p g_ip g_jp, packed lower. */
+function addProducts(g: Float64Array, out: Float64Array, at: number): void {
+  let k = at;
+  for (let i = 0; i < NODES; i++) {
+    const a = i * POINTS;
+    for (let j = 0; j <= i; j++) {
+      const b = j * POINTS;
+      let even = 0;
+      let odd = 0;
+      for (let p = 0; p < POINTS; p += 2) {
+        even += g[a + p] * g[b + p];
+        odd += g[a + p + 1] * g[b + p + 1];
+      }
+      out[k++] += even + odd;
+    }
+  }
 }
 
 /** K of the exterior cells. */
@@ -156,12 +167,10 @@ function integrateExteriorCell(
     const scale = Math.sqrt(GAUSS16.w[p] / (radius * Math.abs(det)));
     const ft = (scale * tp) / Math.sqrt((1 - cp) * (1 + cp));
     for (let i = 0; i < NODES; i++) {
-      gs[i] = ft * (field.dXi[q + i] * cEta - field.dEta[q + i] * cXi);
-      gz[i] = scale * (field.dEta[q + i] * tXi - field.dXi[q + i] * tEta);
-    }
-    let k = cell * PACKED;
-    for (let i = 0; i < NODES; i++) {
-      for (let j = 0; j <= i; j++) out[k++] += gs[i] * gs[j] + gz[i] * gz[j];
+      GS[i * POINTS + p] = ft * (field.dXi[q + i] * cEta - field.dEta[q + i] * cXi);
+      GZ[i * POINTS + p] = scale * (field.dEta[q + i] * tXi - field.dXi[q + i] * tEta);
     }
   }
+  addProducts(GS, out, cell * PACKED);
+  addProducts(GZ, out, cell * PACKED);
 }

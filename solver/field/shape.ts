@@ -12,8 +12,10 @@
 
 /** Nodes a cell. */
 export const NODES = 9;
-/** How far from straight in (s, z), in units of its length, an edge leaving the axis may be and still count as leaving at a right angle. */
-const STRAIGHT = 0.02;
+/** The middle node of an edge that leaves the axis squarely stands at a quarter of s, and of z: within these bounds (an arc of 45° still does). */
+const QUARTER = [0.2, 0.3] as const;
+/** A rise below this part of the edge's length is none. */
+const LEVEL = 1e-9;
 
 /** Values of the nine functions and of their derivatives at points one after another: 9 numbers a point. */
 export interface ShapeTable {
@@ -39,9 +41,11 @@ export function edgeKind(r: Float64Array, z: Float64Array, i: number, j: number,
   return 0;
 }
 
+/** True when z goes with s along the edge: level, or an arc about the axis. A slanted line goes with r, and belongs to r as its coordinate. */
 function leavesSquarely(z0: number, rm: number, zm: number, r1: number, z1: number): boolean {
-  const q = (rm / r1) ** 2;
-  return q > 0.2 && q < 0.3 && Math.abs(zm - z0 - q * (z1 - z0)) <= STRAIGHT * r1;
+  const quarter = (q: number): boolean => q > QUARTER[0] && q < QUARTER[1];
+  const level = Math.abs(zm - z0) <= LEVEL * r1 && Math.abs(z1 - z0) <= LEVEL * r1;
+  return quarter((rm / r1) ** 2) && (level || quarter((zm - z0) / (z1 - z0)));
 }
 
 /** Place of the middle node of an edge of a kind. */
