@@ -30,35 +30,38 @@ function spot(at: readonly number[] | null): string {
   return ` at r ${r}, z ${z} mm`;
 }
 
-/** "63 % within 0.16 mm of the surface, …, hottest at mid-height." */
+/** "Its heat: 63 % within 0.16 mm, … of the surface; most of it around mid-height." */
 function whereItSits(part: PartResult): string[] {
   const sentences = [
     depths(part.depthShares, "the surface"),
     // A solid cylinder's side tells little beyond its nearest surface; with a bore the two sides are worth telling apart.
     part.boreDepthShares === null ? "" : depths(part.sideDepthShares, "the outer side"),
     depths(part.boreDepthShares, "the bore"),
-  ].filter((sentence) => sentence !== "");
-  const text = sentences.length === 0 ? "" : `Its heat: ${sentences.join("; ")}; `;
-  return wrap(`${text}${text === "" ? "Most" : "most"} of it ${height(part.sliceShares)}.`, "  ");
+    height(part.sliceShares),
+  ];
+  return wrap(`Its heat: ${sentences.filter((sentence) => sentence !== "").join("; ")}.`, "  ");
 }
 
 function depths(shares: readonly DepthShare[] | null, from: string): string {
-  if (shares === null) return "";
+  if (shares === null || shares.length === 0) return "";
   if (shares.every(({ share }) => share < 5e-4)) return `next to none at ${from}`;
+  if (shares.every(({ share }) => share > 0.9995))
+    return `all within ${plain(shares[0]!.depthMm, 3)} mm of ${from}`;
   const list = shares.map(({ depthMm, share }) => `${percent(share)} within ${plain(depthMm, 3)} mm`);
   return `${list.join(", ")} of ${from}`;
 }
 
-/** Where along the height the warmest neighbourhood lies, in words. */
+/** Where along the height most of it lies, in words. */
 function height(shares: readonly number[]): string {
-  const centre = shares.reduce((sum, share, k) => sum + share * (k + 0.5), 0) / 8;
-  const middle = shares.slice(2, 6).reduce((sum, share) => sum + share, 0);
-  const ends = 1 - middle;
-  if (centre > 0.6) return "towards the top";
-  if (centre < 0.4) return "towards the bottom";
-  if (middle > 0.6) return "around mid-height";
-  if (ends > 0.6) return "towards both ends";
-  return "spread evenly along its height";
+  const sum = (from: number, to: number): number => shares.slice(from, to).reduce((a, b) => a + b, 0);
+  if (Math.max(...shares) < 1.5 * Math.min(...shares)) return "spread evenly along its height";
+  const upper = sum(4, 8);
+  const middle = sum(2, 6);
+  if (upper > 0.6) return `${percent(upper)} in the upper half`;
+  if (upper < 0.4) return `${percent(1 - upper)} in the lower half`;
+  if (middle > 0.6) return "most of it around mid-height";
+  if (middle < 0.4) return "most of it towards both ends";
+  return upper >= 0.5 ? `${percent(upper)} in the upper half` : `${percent(1 - upper)} in the lower half`;
 }
 
 const barLength = 30;

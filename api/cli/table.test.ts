@@ -140,6 +140,21 @@ describe("the people's table", () => {
     expect(bars[0]).toBeLessThan(bars[3]!);
   });
 
+  it("says along which height the heat lies, and what reaches through", () => {
+    const heat = (sliceShares: number[], share = 0.6): string => {
+      const depthShares = [{ depthMm: 13.2, share }];
+      return text({ ...result, parts: [{ ...pin, sliceShares, depthShares }] }).replace(/\s+/g, " ");
+    };
+    expect(heat([0.12, 0.12, 0.13, 0.13, 0.13, 0.13, 0.12, 0.12])).toContain("spread evenly");
+    expect(heat([0.02, 0.03, 0.05, 0.1, 0.2, 0.3, 0.2, 0.1])).toContain("80.0 % in the upper half");
+    expect(heat([0.35, 0.15, 0, 0, 0, 0, 0.15, 0.35])).toContain("towards both ends");
+    expect(heat([0.16, 0.15, 0.14, 0.12, 0.12, 0.12, 0.1, 0.09])).toContain("57.0 % in the lower half");
+    expect(heat([0.16, 0.15, 0.14, 0.12, 0.12, 0.12, 0.1, 0.09], 1)).toContain(
+      "all within 13.2 mm of the surface",
+    );
+    expect(heat([0.16, 0.15, 0.14, 0.12, 0.12, 0.12, 0.1, 0.09], 0)).toContain("next to none at the surface");
+  });
+
   it("leaves out what is not there: no part, no leads, no stray points", () => {
     const bare = text({ ...result, loaded: null, parts: [], strayField: [], leads: null, cautions: [] });
     expect(bare).not.toMatch(/loaded|PART|STRAY|CAUTIONS|NaN|undefined|null/);
