@@ -3,14 +3,18 @@
  *
  *   p = ω²σ |ψ − u|²/s + (ω Im ν/μ0) [4|ψ_s|² + |ψ_z|²/s]   (W/m³, rms amplitudes; the second term is the lag of a magnetic material)
  *
- * at the middles of m × m equal pieces of a cell's (ξ, η) square, each with its volume π ds dz.
+ * at the middles and the corners of m × m equal pieces of a cell's (ξ, η) square, each with its volume π ds dz. The outermost corners are drawn
+ * in by 10⁻⁴ of the cell, off the axis, where the formula is 0/0.
  */
 import { MU0 } from "../constants.ts";
 import { type CellTables, innerTables } from "./axis.ts";
 import { gather } from "./cellforms.ts";
 import type { Solution } from "./prepare.ts";
-import { NODES, type ShapeTable } from "./shape.ts";
+import { NODES } from "./shape.ts";
 import { reluctivityOf } from "./system.ts";
+
+/** How far the outermost corners stand inside the cell's edges, in (ξ, η). */
+const DRAWN_IN = 1e-4;
 
 /** Pieces of one cell, row by row (ξ fastest). Buffers are reused: valid until the next cell is asked for. */
 export interface CellSamples {
@@ -19,16 +23,17 @@ export interface CellSamples {
   readonly z: Float64Array;
   readonly volume: Float64Array;
   readonly density: Float64Array;
-  /** Corners of the pieces, m; length (m + 1)². */
+  /** Corners of the pieces: m, W/m³; length (m + 1)². */
   readonly cornerR: Float64Array;
   readonly cornerZ: Float64Array;
+  readonly cornerDensity: Float64Array;
 }
 
 /** Reads m × m pieces of a cell inside the outer circle. */
 export function heatSampler(solution: Solution, m: number): (cell: number) => CellSamples {
   const { grid, system } = solution.prepared;
-  const middles = innerTables(grid, ...lattice(m, m, 1 / m - 1));
-  const corners = innerTables(grid, ...lattice(m, m + 1, -1));
+  const middles = innerTables(grid, ...lattice(m, 1 - 1 / m));
+  const corners = innerTables(grid, ...lattice(m + 1, 1 - DRAWN_IN));
   const out = emptySamples(m);
   const s = new Float64Array(NODES);
   const z = new Float64Array(NODES);
@@ -48,20 +53,23 @@ export function heatSampler(solution: Solution, m: number): (cell: number) => Ce
     reluctivityOf(solution, region, cell, nu);
     const joule = solution.omega ** 2 * solution.materials[region].conductivity;
     const lag = (solution.omega * nu[1]) / MU0;
-    readMiddles(middles(cell), s, z, re, im, joule, lag, 4 / (m * m), out);
-    readCorners(corners(cell).geometry, s, z, out);
+    const heat = { s, z, re, im, joule, lag };
+    readPoints(middles(cell), heat, out.r, out.z, out.density, out.volume);
+    for (let p = 0; p < out.volume.length; p++) out.volume[p] *= (4 * Math.PI) / (m * m);
+    readPoints(corners(cell), heat, out.cornerR, out.cornerZ, out.cornerDensity, null);
     return out;
   };
 }
 
-/** ξ and η of count × count points, steps 2/m from `first`. */
-function lattice(m: number, count: number, first: number): [number[], number[]] {
+/** ξ and η of count × count points evenly from −end to end. */
+function lattice(count: number, end: number): [number[], number[]] {
   const xi: number[] = [];
   const eta: number[] = [];
+  const at = (i: number): number => (count === 1 ? 0 : end * ((2 * i) / (count - 1) - 1));
   for (let j = 0; j < count; j++) {
     for (let i = 0; i < count; i++) {
-      xi.push(first + (2 * i) / m);
-      eta.push(first + (2 * j) / m);
+      xi.push(at(i));
+      eta.push(at(j));
     }
   }
   return [xi, eta];
@@ -77,67 +85,58 @@ function emptySamples(m: number): CellSamples {
     density: piece(),
     cornerR: corner(),
     cornerZ: corner(),
+    cornerDensity: corner(),
   };
 }
 
-/** Flat arguments and one loop: runs for every sample of a part. */
-function readMiddles(
+/** A cell's nodal values, and the factors σω² and ω Im ν/μ0. */
+interface CellHeat {
+  readonly s: Float64Array;
+  readonly z: Float64Array;
+  readonly re: Float64Array;
+  readonly im: Float64Array;
+  readonly joule: number;
+  readonly lag: number;
+}
+
+/** Places, densities and, where asked for, determinants at the tables' points. One long loop: runs for every sample of a part. */
+function readPoints(
   tables: CellTables,
-  s: Float64Array,
-  z: Float64Array,
-  re: Float64Array,
-  im: Float64Array,
-  joule: number,
-  lag: number,
-  weight: number,
-  out: CellSamples,
+  heat: CellHeat,
+  outR: Float64Array,
+  outZ: Float64Array,
+  density: Float64Array,
+  determinant: Float64Array | null,
 ): void {
   const { n, dXi, dEta } = tables.geometry;
   const { field } = tables;
-  for (let p = 0; p < out.r.length; p++) {
+  const { s, z, re, im, joule, lag } = heat;
+  for (let p = 0; p < outR.length; p++) {
     let [sp, zp, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0, 0];
     let [x, y, xXi, xEta, yXi, yEta] = [0, 0, 0, 0, 0, 0];
     for (let i = 0; i < NODES; i++) {
-      const N = n[p * NODES + i];
-      const a = dXi[p * NODES + i];
-      const b = dEta[p * NODES + i];
-      sp += N * s[i];
-      zp += N * z[i];
-      sXi += a * s[i];
-      sEta += b * s[i];
-      zXi += a * z[i];
-      zEta += b * z[i];
-      const F = field.n[p * NODES + i];
-      const fXi = field.dXi[p * NODES + i];
-      const fEta = field.dEta[p * NODES + i];
-      x += F * re[i];
-      y += F * im[i];
-      xXi += fXi * re[i];
-      xEta += fEta * re[i];
-      yXi += fXi * im[i];
-      yEta += fEta * im[i];
+      const k = p * NODES + i;
+      sp += n[k] * s[i];
+      zp += n[k] * z[i];
+      sXi += dXi[k] * s[i];
+      sEta += dEta[k] * s[i];
+      zXi += dXi[k] * z[i];
+      zEta += dEta[k] * z[i];
+      x += field.n[k] * re[i];
+      y += field.n[k] * im[i];
+      xXi += field.dXi[k] * re[i];
+      xEta += field.dEta[k] * re[i];
+      yXi += field.dXi[k] * im[i];
+      yEta += field.dEta[k] * im[i];
     }
     const det = sXi * zEta - sEta * zXi;
-    out.r[p] = Math.sqrt(sp);
-    out.z[p] = zp;
-    out.volume[p] = Math.PI * det * weight;
-    out.density[p] = (joule * (x * x + y * y)) / sp;
+    outR[p] = Math.sqrt(sp);
+    outZ[p] = zp;
+    if (determinant !== null) determinant[p] = det;
+    density[p] = (joule * (x * x + y * y)) / sp;
     if (lag === 0) continue;
     const bySquares = (xXi * zEta - xEta * zXi) ** 2 + (yXi * zEta - yEta * zXi) ** 2;
     const byHeights = (xEta * sXi - xXi * sEta) ** 2 + (yEta * sXi - yXi * sEta) ** 2;
-    out.density[p] += (lag * (4 * bySquares + byHeights / sp)) / (det * det);
-  }
-}
-
-function readCorners(table: ShapeTable, s: Float64Array, z: Float64Array, out: CellSamples): void {
-  for (let p = 0; p < out.cornerR.length; p++) {
-    let sp = 0;
-    let zp = 0;
-    for (let i = 0; i < NODES; i++) {
-      sp += table.n[p * NODES + i] * s[i];
-      zp += table.n[p * NODES + i] * z[i];
-    }
-    out.cornerR[p] = Math.sqrt(Math.max(0, sp));
-    out.cornerZ[p] = zp;
+    density[p] += (lag * (4 * bySquares + byHeights / sp)) / (det * det);
   }
 }

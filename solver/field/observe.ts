@@ -3,22 +3,24 @@
  * depths under a surface), and the density not exceeded in a given share of its volume.
  *
  * A cell on one side of a level counts whole, with its power from the cell's own quadrature. A cell the level cuts is read in 8 × 8 pieces, scaled
- * to the cell's power; in a piece the level function is taken as evenly spread between its least and greatest corner value, so
- * the share is a continuous function of the level and its error second order in the piece.
+ * to the cell's power. In a piece the level goes evenly from its least to its greatest corner value and the density linearly from the mean of
+ * the two lower corners to that of the two upper; so shares are continuous in the level, with an error of third order in the piece. The quantile takes
+ * the density itself as the level, and volume in place of power.
  */
 import { SolverError } from "../errors.ts";
-import { heatSampler } from "./density.ts";
+import { type CellSamples, heatSampler } from "./density.ts";
 import type { Losses } from "./losses.ts";
 import type { Solution } from "./prepare.ts";
 import { NODES } from "./shape.ts";
 
 /** Pieces along a side of a cut cell. */
 const PIECES = 8;
-/** Pieces along a side of a cell in the first and in the second look for the hottest volume. */
+/** Pieces along a side of a cell in the first look for the hottest volume; the second takes PIECES. */
 const COARSE = 2;
-const FINE = 16;
-/** A cell is looked at again when its hottest piece passes this part of the estimated quantile. */
-const WORTH_A_LOOK = 0.5;
+/** A cell is looked at again when its hottest corner passes this part of the estimated quantile. */
+const WORTH_A_LOOK = 0.7;
+/** Halvings that narrow the quantile down to rounding. */
+const HALVINGS = 60;
 /** The level function inside a cell may pass its nodes' range by this part of it. */
 const MARGIN = 0.1;
 /** The hot spot is the middle of the hottest volume where that lies this near to it, in units of the volume's spread. */
@@ -75,30 +77,53 @@ export function sharesBelow(
 
 /** Adds the power of a cut cell's pieces below each threshold. */
 function addCut(
-  samples: ReturnType<ReturnType<typeof heatSampler>>,
+  samples: CellSamples,
   power: number,
   level: (r: number, z: number) => number,
   thresholds: readonly number[],
   below: Float64Array,
 ): void {
-  const { volume, density, cornerR, cornerZ } = samples;
-  const side = PIECES + 1;
-  const value = new Float64Array(side * side);
+  const { volume, cornerR, cornerZ, cornerDensity } = samples;
+  const value = new Float64Array(cornerR.length);
   for (let k = 0; k < value.length; k++) value[k] = level(cornerR[k], cornerZ[k]);
+  const part = new Float64Array(thresholds.length);
   let sampled = 0;
-  for (let p = 0; p < volume.length; p++) sampled += volume[p] * density[p];
-  if (!(sampled > 0)) return;
-  const scale = power / sampled;
   for (let p = 0; p < volume.length; p++) {
-    const k = Math.floor(p / PIECES) * side + (p % PIECES);
-    const [a, b, c, d] = [value[k], value[k + 1], value[k + side], value[k + side + 1]];
-    const least = Math.min(a, b, c, d);
-    const spread = Math.max(a, b, c, d) - least;
-    const piece = scale * volume[p] * density[p];
+    const corners = cornersOf(p, PIECES);
+    sortFour(corners, value);
+    const least = value[corners[0]];
+    const spread = value[corners[3]] - least;
+    const low = (cornerDensity[corners[0]] + cornerDensity[corners[1]]) / 2;
+    const high = (cornerDensity[corners[2]] + cornerDensity[corners[3]]) / 2;
+    sampled += (volume[p] * (low + high)) / 2;
     thresholds.forEach((t, i) => {
-      const part = spread > 0 ? (t - least) / spread : t >= least ? 1 : 0;
-      below[i] += piece * Math.min(1, Math.max(0, part));
+      const f = spread > 0 ? Math.min(1, Math.max(0, (t - least) / spread)) : t >= least ? 1 : 0;
+      part[i] += volume[p] * f * (low + ((high - low) * f) / 2);
     });
+  }
+  if (!(sampled > 0)) return;
+  for (let i = 0; i < below.length; i++) below[i] += (power * part[i]) / sampled;
+}
+
+const CORNERS = new Int32Array(4);
+
+/** Places of piece p's four corners among the (m + 1)² of its cell; valid until the next call. */
+function cornersOf(p: number, m: number): Int32Array {
+  const k = Math.floor(p / m) * (m + 1) + (p % m);
+  CORNERS[0] = k;
+  CORNERS[1] = k + 1;
+  CORNERS[2] = k + m + 1;
+  CORNERS[3] = k + m + 2;
+  return CORNERS;
+}
+
+/** Four places by rising value, in place. */
+function sortFour(places: Int32Array, value: Float64Array): void {
+  for (let i = 1; i < 4; i++) {
+    const own = places[i];
+    let j = i;
+    for (; j > 0 && value[places[j - 1]] > value[own]; j--) places[j] = places[j - 1];
+    places[j] = own;
   }
 }
 
@@ -124,12 +149,13 @@ export interface HotSpot {
   readonly z: number;
 }
 
-/** Samples with a density above a floor. */
+/** Pieces: the place of the hottest corner, and the densities between which each lies. */
 interface Pieces {
   readonly r: number[];
   readonly z: number[];
   readonly volume: number[];
-  readonly density: number[];
+  readonly least: number[];
+  readonly most: number[];
 }
 
 /**
@@ -138,76 +164,80 @@ interface Pieces {
  */
 export function quantileDensity(solution: Solution, regions: readonly number[], share = 0.999): HotSpot {
   const cells = cellsOf(solution, regions);
-  const coarse = piecesOf(solution, cells, COARSE, -1);
+  const coarse = piecesOf(solution, cells, COARSE);
   const tail = (1 - share) * coarse.volume.reduce((sum, v) => sum + v, 0);
-  const estimate = upperQuantile(coarse, tail).density;
+  const floor = WORTH_A_LOOK * upperQuantile(coarse, tail);
   const perCell = COARSE * COARSE;
-  const hottest = cells.filter((_cell, i) => {
-    const densities = coarse.density.slice(i * perCell, (i + 1) * perCell);
-    return Math.max(...densities) >= WORTH_A_LOOK * estimate;
-  });
-  const fine = piecesOf(solution, hottest, FINE, WORTH_A_LOOK * estimate);
-  const { density, order, count } = upperQuantile(fine, tail);
-  const at = placeOf(fine, order.subarray(0, Math.max(1, count)));
+  const hottest = cells.filter((_cell, i) =>
+    coarse.most.slice(i * perCell, (i + 1) * perCell).some((d) => d >= floor),
+  );
+  const fine = piecesOf(solution, hottest, PIECES);
+  const density = upperQuantile(fine, tail);
+  const at = placeOf(fine, density);
   return { density, r: fine.r[at], z: fine.z[at] };
 }
 
-/** Pieces of the cells above a floor of density. */
-function piecesOf(solution: Solution, cells: readonly number[], m: number, floor: number): Pieces {
+function piecesOf(solution: Solution, cells: readonly number[], m: number): Pieces {
   const read = heatSampler(solution, m);
-  const pieces: Pieces = { r: [], z: [], volume: [], density: [] };
+  const pieces: Pieces = { r: [], z: [], volume: [], least: [], most: [] };
   for (const cell of cells) {
     const samples = read(cell);
     for (let p = 0; p < samples.r.length; p++) {
-      if (samples.density[p] < floor) continue;
-      pieces.r.push(samples.r[p]);
-      pieces.z.push(samples.z[p]);
+      const corners = cornersOf(p, m);
+      sortFour(corners, samples.cornerDensity);
+      pieces.r.push(samples.cornerR[corners[3]]);
+      pieces.z.push(samples.cornerZ[corners[3]]);
       pieces.volume.push(samples.volume[p]);
-      pieces.density.push(samples.density[p]);
+      pieces.least.push(samples.cornerDensity[corners[0]]);
+      pieces.most.push(samples.cornerDensity[corners[3]]);
     }
   }
   return pieces;
 }
 
-/** Density above which lies the volume `tail`, between samples linear in volume; the samples hottest first; how many lie above. */
-function upperQuantile(pieces: Pieces, tail: number): { density: number; order: Uint32Array; count: number } {
-  const { density, volume } = pieces;
-  const order = Uint32Array.from(density, (_d, i) => i).sort((a, b) => density[b] - density[a] || a - b);
-  let above = 0;
-  let lastMiddle = 0;
-  let last = density[order[0]];
-  for (let k = 0; k < order.length; k++) {
-    const i = order[k];
-    const middle = above + volume[i] / 2;
-    if (middle >= tail) {
-      const part = k === 0 ? 1 : (tail - lastMiddle) / (middle - lastMiddle);
-      return { density: last + part * (density[i] - last), order, count: k };
-    }
-    above += volume[i];
-    lastMiddle = middle;
-    last = density[i];
-  }
-  return { density: last, order, count: order.length };
+/** Volume of piece i above a density. */
+function volumeAbove(pieces: Pieces, i: number, density: number): number {
+  const { least, most, volume } = pieces;
+  if (density >= most[i]) return 0;
+  return density <= least[i] ? volume[i] : (volume[i] * (most[i] - density)) / (most[i] - least[i]);
 }
 
-/** The sample nearest to the power-weighted middle of those listed, if it lies near; else the first. */
-function placeOf(pieces: Pieces, listed: Uint32Array): number {
-  let [power, r, z, spread] = [0, 0, 0, 0];
-  for (const i of listed) {
-    const p = pieces.density[i] * pieces.volume[i];
-    power += p;
-    r += p * pieces.r[i];
-    z += p * pieces.z[i];
+/** The density that the volume `tail` exceeds, by halving. */
+function upperQuantile(pieces: Pieces, tail: number): number {
+  let low = 0;
+  let high = pieces.most.reduce((a, b) => Math.max(a, b), 0);
+  for (let k = 0; k < HALVINGS; k++) {
+    const middle = (low + high) / 2;
+    let above = 0;
+    for (let i = 0; i < pieces.volume.length; i++) above += volumeAbove(pieces, i, middle);
+    if (above > tail) low = middle;
+    else high = middle;
   }
-  let nearest = listed[0];
+  return (low + high) / 2;
+}
+
+/** The piece nearest to the middle of the volume above a density, if it lies near; else the hottest. */
+function placeOf(pieces: Pieces, density: number): number {
+  let [volume, r, z, spread, hottest] = [0, 0, 0, 0, 0];
+  const listed: number[] = [];
+  for (let i = 0; i < pieces.volume.length; i++) {
+    if (pieces.most[i] > pieces.most[hottest]) hottest = i;
+    const v = volumeAbove(pieces, i, density);
+    if (v === 0) continue;
+    listed.push(i);
+    volume += v;
+    r += v * pieces.r[i];
+    z += v * pieces.z[i];
+  }
+  let nearest = hottest;
   let distance = Infinity;
   for (const i of listed) {
-    const d = Math.hypot(pieces.r[i] - r / power, pieces.z[i] - z / power);
-    spread += (pieces.density[i] * pieces.volume[i] * d * d) / power;
+    const d = Math.hypot(pieces.r[i] - r / volume, pieces.z[i] - z / volume);
+    spread += (volumeAbove(pieces, i, density) * d * d) / volume;
     if (d < distance) {
       distance = d;
       nearest = i;
     }
   }
-  return distance <= NEAR * Math.sqrt(spread) ? nearest : listed[0];
+  return distance <= NEAR * Math.sqrt(spread) ? nearest : hottest;
 }
