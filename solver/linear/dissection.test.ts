@@ -39,12 +39,16 @@ describe("dissection", () => {
     expect(pivot).toBe(structure.unknowns);
   });
 
-  it("eliminates a turn voltage last in its front", () => {
-    const row = fronts.newNumber[structure.unknowns - 1];
+  it("eliminates a turn voltage last in its front, also when it is named first", () => {
+    const ids = structure.ids.map((v) => structure.unknowns - 1 - v);
+    const renamed = { ...structure, ids };
+    const other = frontsOf(renamed, dissect(renamed));
+    const row = other.newNumber[0];
     let pivot = -1;
     let f = -1;
-    while (pivot < row) pivot += fronts.pivots[++f];
+    while (pivot < row) pivot += other.pivots[++f];
     expect(row).toBe(pivot);
+    expect(other.pivots[f]).toBeGreaterThan(1);
   });
 
   it("cuts a square of n × n cells in halves that share one line of nodes", () => {
