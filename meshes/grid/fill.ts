@@ -28,8 +28,8 @@ export interface Filling {
 const GROWTH = 0.65;
 /** A triangle is too large when its circumradius exceeds this share of the wanted edge length (0.577 = equilateral). */
 const LARGE = 0.8;
-/** Rounds of refinement; each roughly doubles the number of points. */
-const ROUNDS = 14;
+/** Most rounds of refinement; it ends by itself when nothing is too large any more. */
+const ROUNDS = 80;
 const SMOOTHINGS = 3;
 const EAR_ROUNDS = 3;
 /** Cosine of the angle from which a corner between two given edges is too flat to be a corner of one face. */

@@ -26,6 +26,8 @@ const CORNER_SHARE = 0.1;
 const ARC_SHARE = 0.62;
 /** Widest angle one edge of the filling may span: its bulge must stay inside the faces beside it, rad. */
 const WIDEST_ARC = 0.8;
+/** A round turn farther from a side than this, in radii, needs no nodes that face each other. */
+const FACING = 4;
 /** Turns of direction below this are a bend, not a corner, rad. */
 export const CORNER_ANGLE = 0.26;
 
@@ -158,13 +160,13 @@ function faceDisc(
   const side = plane.sides[index];
   const near = nearestOnSide(side, plane.nodes, centre[0], centre[1]);
   const gap = near.distance - radius;
-  if (gap <= 0 || gap > 4 * radius) return;
-  if (near.t <= 0 || near.t >= 1) return;
+  if (gap <= 0 || near.t <= 0 || near.t >= 1) return;
   const bend = side.arc === null ? radius : Math.min(radius, side.arc.radius);
   const [r, z] = sidePoint(side, plane.nodes, near.t);
   const own =
     side.arc === null ? 0.6 * Math.sqrt(2 * bend * gap + gap * gap) : 0.5 * Math.sqrt(2 * bend * gap);
   field.add(r, z, own);
+  if (gap > FACING * radius) return;
   const k = radius / near.distance;
   field.add(
     centre[0] + k * (r - centre[0]),
