@@ -3,17 +3,17 @@
  *
  *   p = ω²σ |ψ − u|²/s + (ω Im ν/μ0) [4|ψ_s|² + |ψ_z|²/s]   (W/m³, rms amplitudes; the second term is the lag of a magnetic material)
  *
- * at the middles and the corners of m × m equal pieces of a cell's (ξ, η) square, each with its volume π ds dz. The outermost corners are drawn
- * in by 10⁻⁴ of the cell, off the axis, where the formula is 0/0.
+ * at the middles and the corners of m × m equal pieces of a cell's (ξ, η) square, each with its volume π ds dz. The density of the outermost
+ * corners is read 10⁻⁴ of the cell inside its edges, off the axis, where the formula is 0/0.
  */
 import { MU0 } from "../constants.ts";
 import { type CellTables, innerTables } from "./axis.ts";
 import { gather } from "./cellforms.ts";
 import type { Solution } from "./prepare.ts";
-import { NODES } from "./shape.ts";
+import { NODES, type ShapeTable } from "./shape.ts";
 import { reluctivityOf } from "./system.ts";
 
-/** How far the outermost corners stand inside the cell's edges, in (ξ, η). */
+/** How far inside the cell's edges the outermost corners' density is read, in (ξ, η). */
 const DRAWN_IN = 1e-4;
 
 /** Pieces of one cell, row by row (ξ fastest). Buffers are reused: valid until the next cell is asked for. */
@@ -33,7 +33,8 @@ export interface CellSamples {
 export function heatSampler(solution: Solution, m: number): (cell: number) => CellSamples {
   const { grid, system } = solution.prepared;
   const middles = innerTables(grid, ...lattice(m, 1 - 1 / m));
-  const corners = innerTables(grid, ...lattice(m + 1, 1 - DRAWN_IN));
+  const corners = innerTables(grid, ...lattice(m + 1, 1));
+  const drawnIn = innerTables(grid, ...lattice(m + 1, 1 - DRAWN_IN));
   const out = emptySamples(m);
   const s = new Float64Array(NODES);
   const z = new Float64Array(NODES);
@@ -56,7 +57,8 @@ export function heatSampler(solution: Solution, m: number): (cell: number) => Ce
     const heat = { s, z, re, im, joule, lag };
     readPoints(middles(cell), heat, out.r, out.z, out.density, out.volume);
     for (let p = 0; p < out.volume.length; p++) out.volume[p] *= (4 * Math.PI) / (m * m);
-    readPoints(corners(cell), heat, out.cornerR, out.cornerZ, out.cornerDensity, null);
+    readPoints(drawnIn(cell), heat, out.cornerR, out.cornerZ, out.cornerDensity, null);
+    readPlaces(corners(cell).geometry, s, z, out.cornerR, out.cornerZ);
     return out;
   };
 }
@@ -138,5 +140,25 @@ function readPoints(
     const bySquares = (xXi * zEta - xEta * zXi) ** 2 + (yXi * zEta - yEta * zXi) ** 2;
     const byHeights = (xEta * sXi - xXi * sEta) ** 2 + (yEta * sXi - yXi * sEta) ** 2;
     density[p] += (lag * (4 * bySquares + byHeights / sp)) / (det * det);
+  }
+}
+
+/** Places alone. */
+function readPlaces(
+  { n }: ShapeTable,
+  s: Float64Array,
+  z: Float64Array,
+  outR: Float64Array,
+  outZ: Float64Array,
+): void {
+  for (let p = 0; p < outR.length; p++) {
+    let sp = 0;
+    let zp = 0;
+    for (let i = 0; i < NODES; i++) {
+      sp += n[p * NODES + i] * s[i];
+      zp += n[p * NODES + i] * z[i];
+    }
+    outR[p] = Math.sqrt(Math.max(0, sp));
+    outZ[p] = zp;
   }
 }
