@@ -108,6 +108,13 @@ describe("refusals", () => {
     expect(end.stderr).toMatch(/accepted: .*8/);
   });
 
+  it("take out of a document's own words what a terminal would obey", async () => {
+    const end = await run(["solve", "-"], JSON.stringify({ ...demo, "red\u001b[31m": 1 }));
+    expectRefused(end);
+    expect(end.stderr).toContain("red [31m");
+    expect(end.stderr).not.toContain(String.fromCharCode(27));
+  });
+
   it("are problem documents with --json", async () => {
     const end = await run(["solve", "-", "--json"], JSON.stringify({ ...demo, colour: "red" }));
     expectRefused(end);

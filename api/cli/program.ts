@@ -2,6 +2,7 @@
 import { Command, CommanderError } from "commander";
 import { version } from "../../package.json";
 import { exitStatus, type Failure, toFailure, UsageError } from "../errors.ts";
+import { printable } from "./sentence.ts";
 import { type SolveOptions, solveCommand } from "./solve.ts";
 
 /** Runs one command line and sets the process's exit status; `entry` is the bundle to start threads from. */
@@ -24,7 +25,9 @@ export async function runProgram(args: readonly string[], entry: URL): Promise<v
 }
 
 function complain({ problem, words, exit }: Failure, json: boolean): void {
-  process.stderr.write(json ? `${JSON.stringify(problem, null, 2)}\n` : `${words}\n`);
+  // A document's own keys and names are quoted in the words; what a terminal would obey in them is taken out.
+  const safe = words.split("\n").map(printable).join("\n");
+  process.stderr.write(json ? `${JSON.stringify(problem, null, 2)}\n` : `${safe}\n`);
   process.exitCode = exit;
 }
 

@@ -8,7 +8,7 @@ const count = (n: number, one: string): string => `${n} ${one}${n === 1 ? "" : "
 
 /** A name as it may be printed: control characters, which a terminal would obey, become blanks. */
 export function printable(name: string): string {
-  return name.replace(/\p{C}+/gu, " ").trim();
+  return name.replace(/\p{C}+/gu, " ").trimEnd();
 }
 
 /** "round copper tube 8 mm, wall 1 mm". */

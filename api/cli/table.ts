@@ -26,7 +26,10 @@ export function renderTable(result: Result, { colour }: Dress): string {
     ...section("AT THE COIL'S TERMINALS", terminalLines(result.empty, result.loaded)),
     ...section("POWER AND SUPPLY", powerLines(result.power)),
     ...result.parts.flatMap((part) => section(`PART: ${printable(part.name)}`, partSection(part))),
-    ...section("TURNS (power in the copper of each, W)", turnLines(result)),
+    ...section(
+      "TURNS (counted from 0, in the winding's order; power in the copper of each, W)",
+      turnLines(result),
+    ),
     ...section("STRAY FIELD (rms)", strayLines(result)),
     ...section("COPPER AND LEADS", copperLines(result)),
     ...section(
@@ -129,13 +132,13 @@ function turnLines({ turns }: Result): string[] {
   if (turns.length <= 12) {
     const r = evenly(turns.map((turn) => turn.rMm));
     const z = evenly(turns.map((turn) => turn.zMm));
-    const rows = turns.map((_, k) => [String(k + 1), r[k]!, z[k]!, powers[k]!]);
+    const rows = turns.map((_, k) => [String(k), r[k]!, z[k]!, powers[k]!]);
     return columns(rows, ["right", "right", "right", "right"], ["turn", "r mm", "z mm", "W"]);
   }
   const lines: string[][] = [];
   for (let k = 0; k < turns.length; k += 8) {
     const some = powers.slice(k, k + 8);
-    lines.push([`${k + 1} to ${k + some.length}`, ...some]);
+    lines.push([`${k} to ${k + some.length - 1}`, ...some]);
   }
   return columns(lines, Array<Alignment>(9).fill("right"));
 }
