@@ -37,7 +37,9 @@ export class SizeField {
   private readonly h: number[] = [];
   constructor(private readonly cap: number) {}
 
+  /** A source; one that changes nothing is left out. */
   add(r: number, z: number, h: number): void {
+    if (this.at(r, z) <= h) return;
     this.r.push(r);
     this.z.push(z);
     this.h.push(h);
@@ -161,6 +163,7 @@ function faceDisc(
   const near = nearestOnSide(side, plane.nodes, centre[0], centre[1]);
   const gap = near.distance - radius;
   if (gap <= 0 || near.t <= 0 || near.t >= 1) return;
+  if (gap > FACING * radius && 0.6 * gap > longestCell(side)) return;
   const bend = side.arc === null ? radius : Math.min(radius, side.arc.radius);
   const [r, z] = sidePoint(side, plane.nodes, near.t);
   const own =
@@ -181,6 +184,12 @@ function faceDisc(
     const hit = nearestOnSide(other, plane.nodes, qr, qz);
     if (hit.distance < 1e-9 && hit.t > 0 && hit.t < 1) stops.push({ side: j, t: hit.t, gap });
   });
+}
+
+/** Longest cell a side can have whatever its surroundings. */
+function longestCell(side: Side): number {
+  if (side.kind === "edge") return Infinity;
+  return side.arc === null ? side.length / 2 : ARC_SHARE * side.arc.radius;
 }
 
 /** A corner near this side. */
