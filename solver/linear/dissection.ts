@@ -27,7 +27,7 @@ const LEAF = 4;
 /** Sets below this size are not worth smoothing. */
 const SMOOTH_FROM = 32;
 /** A half holds at least this share of its set; of small sets more, or leaves would be lopsided. */
-const LEAST_SHARE = 0.2;
+const LEAST_SHARE = 0.15;
 const SMALL = 24;
 const LEAST_SHARE_SMALL = 0.4;
 /** Directions of sweep: angles dπ/SWEEPS in the (x, y) plane. */

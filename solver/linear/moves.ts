@@ -69,7 +69,7 @@ export class Mover {
     let bestSize = -1;
     let bestCount = 0;
     let count = 0;
-    const patience = 10 + (n >> 6);
+    const patience = 20 + (n >> 5);
     while (count - bestCount < patience) {
       const i = this.pick(size > least, n - size > least, 2 * size >= n);
       if (i === NONE) break;
