@@ -35,14 +35,14 @@ export function metal(constants: Constants, conductivity: number, mur = 1, turn 
 }
 
 /** A region that neither conducts nor magnetises: air, a watching coil. */
-export const PASSIVE: RegionTraits = { skinDepth: Infinity, wall: 0, active: false };
+export const PASSIVE: RegionTraits = { skinDepth: Infinity, wall: 0, active: false, magnetic: false };
 
 /** The same with small cells at its corners: a winding of prescribed current whose corners the field bends round. */
 export const WINDING: RegionTraits = { ...PASSIVE, active: true };
 
-/** A conducting region of this skin depth (m), given in units of `unit`; `wall` for tubes. */
-export function conducting(depth: number, unit: number, wall = 0): RegionTraits {
-  return { skinDepth: depth / unit, wall: wall / unit, active: true };
+/** A conducting region of this skin depth (m), given in units of `unit`. */
+export function conducting(depth: number, unit: number, mur = 1): RegionTraits {
+  return { skinDepth: depth / unit, wall: 0, active: true, magnetic: mur > 1 };
 }
 
 /** Patches of shapes given in units of `unit` metres; the domain too. */

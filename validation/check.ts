@@ -35,7 +35,18 @@ export interface Check {
   readonly why: string;
   /** Constants that must turn at least one row red. */
   readonly spoiled: Constants;
-  run(constants: Constants): Row[] | Promise<Row[]>;
+  /** The check in pieces that can be run by themselves, in the report's order. */
+  readonly pieces: readonly ((constants: Constants) => Row[])[];
+}
+
+/** All rows of a check. */
+export function rowsOf(check: Check, constants: Constants): Row[] {
+  return check.pieces.flatMap((piece) => piece(constants));
+}
+
+/** Whether any piece turns red; stops at the first that does. */
+export function turnsRed(check: Check, constants: Constants): boolean {
+  return check.pieces.some((piece) => piece(constants).some((row) => !row.passed));
 }
 
 /** A figure with the project's own error bar (same unit), if it has one. */

@@ -43,3 +43,17 @@ export function ringsDesign(rings: Rings, constants: Constants): unknown {
     accuracyPercent: rings.accuracyPercent ?? 0.1,
   };
 }
+
+/** What of a design can be spoiled. */
+interface Spoilable {
+  readonly coil: { readonly conductor: { readonly material: { resistivityOhmM: number } } };
+  readonly parts: readonly { readonly material: { resistivityOhmM: number } }[];
+}
+
+/** A copy of the design with copper's and parts' conductivities spoiled as asked. */
+export function spoiltDesign<T extends Spoilable>(design: T, constants: Constants): T {
+  const copy = structuredClone(design);
+  copy.coil.conductor.material.resistivityOhmM /= constants.conductivity;
+  for (const part of copy.parts) part.material.resistivityOhmM /= constants.conductivity;
+  return copy;
+}

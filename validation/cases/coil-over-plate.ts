@@ -14,15 +14,13 @@ export const coilOverPlate: Check = {
   method: `Prescribed uniform density in the coil; the plate is a disc of ${REACH} outer coil radii, the half-space one ${DEEP} skin depths thick; ΔZ is the difference of two solutions on one grid.`,
   why: "The disc ends where the induced current has fallen to some 1e-3 of its greatest density; grid errors are below that.",
   spoiled: { conductivity: 1.05, permeability: 1, length: 1 },
-  run(constants) {
-    return [
-      "dd-half-al-7k",
-      "dd-half-steel-20k",
-      "dd-c9-10000",
-      "dd-plate-al2-500",
-      "dd-plate-steel5-200",
-    ].flatMap((id) => rows(id, constants));
-  },
+  pieces: [
+    "dd-half-al-7k",
+    "dd-half-steel-20k",
+    "dd-c9-10000",
+    "dd-plate-al2-500",
+    "dd-plate-steel5-200",
+  ].map((id) => (constants) => rows(id, constants)),
 };
 
 function rows(id: string, constants: Constants): Row[] {
@@ -36,7 +34,7 @@ function rows(id: string, constants: Constants): Row[] {
     (x) => x / unit,
   ) as [number, number, number, number];
   const shapes = [box(r1, r2, l1, l1 + h, 1), box(0, 1, -thickness / unit, 0, 2)];
-  const traits = [PASSIVE, WINDING, conducting(depth, unit)];
+  const traits = [PASSIVE, WINDING, conducting(depth, unit, c.input("mur"))];
   const mesh = meshOf(shapes, traits, { kind: "open", radius: 1.5, mirror: false }, unit);
   const [dR, dL] = reflectedImpedance(mesh, c.input("N"), omega, sigma, c.input("mur"), constants);
   return [

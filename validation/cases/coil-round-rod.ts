@@ -12,16 +12,14 @@ export const coilRoundRod: Check = {
   method: `Prescribed uniform density in the coil; the endless rod is one of ${2 * REACH} coil heights; ΔZ is the difference of two solutions on one grid.`,
   why: "A non-magnetic rod's far part sees the coil as a dipole and matters little; a magnetic one carries flux along itself, hence the wider band there.",
   spoiled: { conductivity: 1.05, permeability: 1, length: 1 },
-  run(constants) {
-    return [
-      "dd-rod-cu-10k",
-      "dd-rod-hot-10k",
-      "dd-rod-graphite",
-      "dd-rod-steel-5k",
-      "dd-tube-al",
-      "dd-tube-steel",
-    ].flatMap((id) => rows(id, constants));
-  },
+  pieces: [
+    "dd-rod-cu-10k",
+    "dd-rod-hot-10k",
+    "dd-rod-graphite",
+    "dd-rod-steel-5k",
+    "dd-tube-al",
+    "dd-tube-steel",
+  ].map((id) => (constants) => rows(id, constants)),
 };
 
 function rows(id: string, constants: Constants): Row[] {
@@ -38,7 +36,7 @@ function rows(id: string, constants: Constants): Row[] {
   ];
   const bore = id.includes("tube") ? c.input("a") / unit : 0;
   const shapes = [box(r1, r2, -h / 2, h / 2, 1), box(bore, b, -1, 1, 2)];
-  const traits = [PASSIVE, WINDING, conducting(depth, unit)];
+  const traits = [PASSIVE, WINDING, conducting(depth, unit, c.input("mur"))];
   const mesh = meshOf(shapes, traits, { kind: "open", radius: 1.5, mirror: false }, unit);
   const [dR, dL] = reflectedImpedance(mesh, c.input("N"), omega, sigma, c.input("mur"), constants);
   const band = c.input("mur") > 1 ? 3e-3 : 1e-3;

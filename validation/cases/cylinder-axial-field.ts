@@ -14,17 +14,15 @@ export const cylinderAxialField: Check = {
     "A slice of an infinite cylinder, natural ends, natural outer side at the surface, applied field. µ' from the flux within the surface, µ'' from the power: P per metre = ω μ0 π a² H² µ'', H rms.",
   why: "One-dimensional and smooth: the grid's error alone.",
   spoiled: { conductivity: 1.02, permeability: 1, length: 1 },
-  run(constants) {
-    return [
-      ...["cyl-mueff-a0.5", "cyl-mueff-a2", "cyl-mueff-a5", "cyl-mueff-a20", "cyl-mueff-a50"].flatMap((id) =>
-        solid(id, constants),
-      ),
-      ...["cyl-hollow-thick", "cyl-hollow-thin", "cyl-hollow-mag", "cyl-hollow-lowf"].flatMap((id) =>
-        hollow(id, constants),
-      ),
-      ...caseIds("cylinder", "cyl-dim-").map((id) => power(id, constants)),
-    ];
-  },
+  pieces: [
+    ...["cyl-mueff-a0.5", "cyl-mueff-a2", "cyl-mueff-a5", "cyl-mueff-a20", "cyl-mueff-a50"].map(
+      (id) => (constants: Constants) => solid(id, constants),
+    ),
+    ...["cyl-hollow-thick", "cyl-hollow-thin", "cyl-hollow-mag", "cyl-hollow-lowf"].map(
+      (id) => (constants: Constants) => hollow(id, constants),
+    ),
+    ...caseIds("cylinder", "cyl-dim-").map((id) => (constants: Constants) => [power(id, constants)]),
+  ],
 };
 
 function solid(id: string, constants: Constants): Row[] {

@@ -3,7 +3,9 @@ import type { Check } from "../check.ts";
 import { coaxialRings } from "./coaxial-rings.ts";
 import { coilOverPlate } from "./coil-over-plate.ts";
 import { coilRoundRod } from "./coil-round-rod.ts";
+import { convergenceOrder } from "./convergence-order.ts";
 import { cylinderAxialField } from "./cylinder-axial-field.ts";
+import { independentScheme } from "./independent-scheme.ts";
 import { openCases } from "./open-cases.ts";
 import { ringInductance } from "./ring-inductance.ts";
 import { ringStackLimit } from "./ring-stack-limit.ts";
@@ -24,4 +26,6 @@ export const CHECKS: readonly Check[] = [
   coilOverPlate,
   coilRoundRod,
   openCases,
+  independentScheme,
+  convergenceOrder,
 ];

@@ -1,7 +1,7 @@
 /** The four open cases: whole designs against our own independent finite-element figures. */
 import type { Result, Uncertain } from "../../meshes/result.ts";
 import { absoluteRow, type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
-import { resultOf } from "../document.ts";
+import { resultOf, spoiltDesign } from "../document.ts";
 import reference from "../reference/open-cases.json";
 
 const SOURCE =
@@ -19,11 +19,11 @@ export const openCases: Check = {
   method: "The design documents as they stand, through predict, at the default accuracy.",
   why: "R, L and part powers: the document's own bar plus the reference's uncertainty (at least 5e-5), the bar itself at most 0.2 %. Slice shares 0.005, depth shares 0.02, turn powers 2 % of the hottest turn's; stray field its bar plus the reference's uncertainty; surface field 1 % (the reference squares a field that is infinite at its edges); peak density 5 % (the reference is up to 2.7 % uncertain).",
   spoiled: { conductivity: 1.02, permeability: 1, length: 1 },
-  run: (constants) => reference.cases.flatMap((c) => rows(c, constants)),
+  pieces: reference.cases.map((c) => (constants) => rows(c, constants)),
 };
 
 function rows(c: Case, constants: Constants): Row[] {
-  const result = resultOf(spoil(c.design, constants));
+  const result = resultOf(spoiltDesign(c.design, constants));
   const loaded = result.loaded;
   const part = result.parts[0];
   if (loaded === null || part === undefined) throw new RangeError(`${c.name} has no part`);
@@ -50,14 +50,6 @@ function rows(c: Case, constants: Constants): Row[] {
     turns(c, result),
     ...stray(c, result),
   ];
-}
-
-/** The design with its parts' and copper's resistivities divided by the factor. */
-function spoil(design: Case["design"], constants: Constants): unknown {
-  const copy = structuredClone(design);
-  copy.coil.conductor.material.resistivityOhmM /= constants.conductivity;
-  for (const part of copy.parts) part.material.resistivityOhmM /= constants.conductivity;
-  return copy;
 }
 
 const figure = (u: Uncertain): Figure => ({ value: u.value, bar: u.plusMinus });

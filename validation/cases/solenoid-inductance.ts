@@ -13,13 +13,15 @@ export const solenoidInductance: Check = {
     "Prescribed uniform current densities. The sheet is the limit of coils of radial thickness t = 1/50 and 1/100 of the lesser of radius and length, taken to 0 linearly; round-wire coils are stacks of rings as in the source.",
   why: "Sheet: the quadratic rest of the extrapolation. Stack of rings: the source treats mutual inductances as those of filaments, which leaves out (d/2a)² terms. Brooks coil: the grid alone.",
   spoiled: { conductivity: 1, permeability: 1.01, length: 1 },
-  run(constants) {
-    return [
-      ...["ind-lundin-long", "ind-lundin-equal", "ind-lundin-short"].map((id) => sheet(id, constants)),
-      brooks(constants),
-      ...["ind-roundwire-7x2mm", "ind-roundwire-4x8mm"].map((id) => stack(id, constants)),
-    ];
-  },
+  pieces: [
+    ...["ind-lundin-long", "ind-lundin-equal", "ind-lundin-short"].map((id) => (constants: Constants) => [
+      sheet(id, constants),
+    ]),
+    (constants) => [brooks(constants)],
+    ...["ind-roundwire-7x2mm", "ind-roundwire-4x8mm"].map((id) => (constants: Constants) => [
+      stack(id, constants),
+    ]),
+  ],
 };
 
 function sheet(id: string, constants: Constants): Row {

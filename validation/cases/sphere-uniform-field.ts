@@ -22,26 +22,23 @@ export const sphereUniformField: Check = {
     "Applied field, open space. α' from the field on the axis at three radii, α'' from the power: P = −2π a³ ω μ0 H² α'', H rms.",
   why: "Two grids on curved cells; the open space itself is exact for a dipole.",
   spoiled: { conductivity: 1.05, permeability: 1, length: 1 },
-  run(constants) {
-    const ids = [
+  pieces: [
+    ...[
       "sph-alpha-a0.5-mu1",
       "sph-alpha-a2-mu1",
       "sph-alpha-a10-mu1",
       "sph-alpha-a3-mu20",
       "sph-alpha-a50-mu100",
-    ];
-    return [
-      ...ids.flatMap((id) => solid(id, constants)),
-      ...["sph-team6", "sph-hollow-mag"].flatMap((id) => hollow(id, constants)),
-    ];
-  },
+    ].map((id) => (constants: Constants) => solid(id, constants)),
+    ...["sph-team6", "sph-hollow-mag"].map((id) => (constants: Constants) => hollow(id, constants)),
+  ],
 };
 
 function solid(id: string, constants: Constants): Row[] {
   const c = checkValue("sphere", id);
   const mur = c.input("mur");
   const depth = RADIUS / c.input("a/delta");
-  const mesh = meshOf([disc(0, 0, 1, 1)], [PASSIVE, conducting(depth, RADIUS)], OPEN, RADIUS);
+  const mesh = meshOf([disc(0, 0, 1, 1)], [PASSIVE, conducting(depth, RADIUS, mur)], OPEN, RADIUS);
   const materials = [air(constants), metal(constants, CONDUCTIVITY, mur)];
   const omega = omegaFor(depth, CONDUCTIVITY, mur);
   const [re, im] = onTwoGrids(mesh, [-1, -1], [1, 2], (prepared) =>
@@ -73,7 +70,7 @@ function hollow(id: string, constants: Constants): Row[] {
   const [a, b, sigma, mur] = [c.input("a_outer"), c.input("b_inner"), c.input("sigma"), c.input("mur")];
   const omega = 2 * Math.PI * c.input("f");
   const shapes = [disc(0, 0, 1, 1), disc(0, 0, b / a, 0, 1)];
-  const mesh = meshOf(shapes, [PASSIVE, conducting(skinDepth(sigma, omega, mur), a)], OPEN, a);
+  const mesh = meshOf(shapes, [PASSIVE, conducting(skinDepth(sigma, omega, mur), a, mur)], OPEN, a);
   const materials = [air(constants), metal(constants, sigma, mur)];
   const figures = onTwoGrids(mesh, [-1, -1], [2, 4], (prepared) => {
     const field = solveApplied(prepared, { materials, omega }, c.input("B0_rms"));

@@ -17,19 +17,22 @@ export const straightConductorSkin: Check = {
     "Design documents of one ring 1 m across of 2 mm wire or tube; R over its dc value, and the internal inductance left when that of the flux outside a thin ring, μ0 a [ln(8a/r) − 2], is taken away.",
   why: "Curvature changes R by (r/a)² ln(a/r), 1e-5. The internal inductance is some 3 % of the whole, so the document's error of L counts about thirtyfold there.",
   spoiled: { conductivity: 1.05, permeability: 1, length: 1 },
-  run(constants) {
-    const wires = ["skin-wire-d2", "skin-wire-d4", "skin-wire-d8", "skin-wire-d16"].flatMap((id) => {
-      const c = checkValue("skin-effect", id);
-      const name = `wire, d/δ = ${c.input("d/delta")}`;
-      return rows(c, name, c.input("d/delta"), null, constants);
-    });
-    const tubes = ["skin-tube-ta0.2-td1", "skin-tube-ta0.2-td2", "skin-tube-ta0.4-td4"].flatMap((id) => {
-      const c = checkValue("skin-effect", id);
-      const name = `tube, wall/radius = ${c.input("t/a")}, wall/δ = ${c.input("t/delta")}`;
-      return rows(c, name, (2 * c.input("t/delta")) / c.input("t/a"), c.input("t/a"), constants);
-    });
-    return [...wires, ...tubes];
-  },
+  pieces: [
+    ...["skin-wire-d2", "skin-wire-d4", "skin-wire-d8", "skin-wire-d16"].map(
+      (id) => (constants: Constants) => {
+        const c = checkValue("skin-effect", id);
+        const name = `wire, d/δ = ${c.input("d/delta")}`;
+        return rows(c, name, c.input("d/delta"), null, constants);
+      },
+    ),
+    ...["skin-tube-ta0.2-td1", "skin-tube-ta0.2-td2", "skin-tube-ta0.4-td4"].map(
+      (id) => (constants: Constants) => {
+        const c = checkValue("skin-effect", id);
+        const name = `tube, wall/radius = ${c.input("t/a")}, wall/δ = ${c.input("t/delta")}`;
+        return rows(c, name, (2 * c.input("t/delta")) / c.input("t/a"), c.input("t/a"), constants);
+      },
+    ),
+  ],
 };
 
 function rows(

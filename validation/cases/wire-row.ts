@@ -9,7 +9,7 @@ import {
 } from "../../solver/index.ts";
 import { tubeImpedanceRatio } from "../analytic/skin.ts";
 import { air, conducting, disc, limitOfHalves, meshOf, metal, omegaFor, PASSIVE } from "../bench.ts";
-import { type Check, type Constants, type Figure, relativeRow } from "../check.ts";
+import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
 import { caseIds, checkValue } from "../tables/read.ts";
 
 const COPPER = 5.8e7;
@@ -27,28 +27,29 @@ export const wireRow: Check = {
     "One pitch of a solenoid 20 000 wire diameters in radius; natural ends (the field is axial there) and natural outside (no field), no flux enclosed inside. Skin limit: d/δ = 50, 100, 200 taken to δ = 0.",
   why: "Finite depth: the grid (1e-4) and the source's 1e-5. Skin limit: the grid's error amplified about three times.",
   spoiled: { conductivity: 1.05, permeability: 1, length: 1 },
-  run(constants) {
-    const finite = caseIds("proximity", "prox-grating-finite-").map((id) => {
-      const c = checkValue("proximity", id);
-      const ratio = resistance(c.input("d/s"), c.input("d/delta"), constants);
-      const name = `R/R_dc, d/s = ${c.input("d/s")}, d/δ = ${c.input("d/delta")}`;
-      return relativeRow(name, c.source, c.expected("R/R0_dc"), ratio, 5e-4);
-    });
-    const limit = ["prox-grating-0.3", "prox-grating-0.5", "prox-grating-0.7"].map((id) => {
-      const c = checkValue("proximity", id);
-      const figures = DEPTHS.map((d) => [overIsolated(c.input("d/s"), d, constants)]);
-      const name = `φ at the skin limit, d/s = ${c.input("d/s")}`;
-      return relativeRow(
-        name,
-        c.source,
-        c.expected("phi_one_side_field_free"),
-        limitOfHalves(figures)[0]!,
-        2e-3,
-      );
-    });
-    return [...finite, ...limit];
-  },
+  pieces: [
+    ...caseIds("proximity", "prox-grating-finite-").map((id) => (constants: Constants) => [
+      finite(id, constants),
+    ]),
+    ...["prox-grating-0.3", "prox-grating-0.5", "prox-grating-0.7"].map((id) => (constants: Constants) => [
+      limit(id, constants),
+    ]),
+  ],
 };
+
+function finite(id: string, constants: Constants): Row {
+  const c = checkValue("proximity", id);
+  const ratio = resistance(c.input("d/s"), c.input("d/delta"), constants);
+  const name = `R/R_dc, d/s = ${c.input("d/s")}, d/δ = ${c.input("d/delta")}`;
+  return relativeRow(name, c.source, c.expected("R/R0_dc"), ratio, 5e-4);
+}
+
+function limit(id: string, constants: Constants): Row {
+  const c = checkValue("proximity", id);
+  const [figure] = limitOfHalves(DEPTHS.map((d) => [overIsolated(c.input("d/s"), d, constants)]));
+  const name = `φ at the skin limit, d/s = ${c.input("d/s")}`;
+  return relativeRow(name, c.source, c.expected("phi_one_side_field_free"), figure!, 2e-3);
+}
 
 function overIsolated(dOverS: number, dOverDelta: number, constants: Constants): Figure {
   const ratio = resistance(dOverS, dOverDelta, constants);
