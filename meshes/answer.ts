@@ -5,6 +5,7 @@
 import {
   type CoilSolution,
   cutGrid,
+  fieldOfRings,
   type GridAnswer,
   type Losses,
   lossesOf,
@@ -12,6 +13,7 @@ import {
   powerBalance,
   prepare,
   quantileDensity,
+  ringSources,
   sliceShares,
   solveState,
   surfaceField,
@@ -183,12 +185,15 @@ function addPart(table: Table, p: PartFigures, i: number, order: number): void {
   table.add(`part${i}.peak`, p.peak, LOCAL_ORDER);
 }
 
+/** By summing over all ring sources; at points too near to one, from the cell that holds the point, which converges slower. */
 function addStray(table: Table, scene: Scene, { solution }: Solved, order: number): void {
   if (scene.strayPoints.length === 0) return;
+  const rings = ringSources(solution);
   const probe = makeProbe(solution);
   scene.strayPoints.forEach(([r, z], i) => {
-    const { br, bz } = probe(r, z);
+    const clear = fieldOfRings(rings, r, z);
+    const { br, bz } = clear ?? probe(r, z);
     const components = [br.re, br.im, bz.re, bz.im];
-    table.add(`stray${i}`, Math.hypot(...components), order, components);
+    table.add(`stray${i}`, Math.hypot(...components), clear === null ? LOCAL_ORDER : order, components);
   });
 }

@@ -7,6 +7,7 @@ export { type Locator, makeLocator, type Place } from "./field/locate.ts";
 export { type Losses, lossesOf, powerBalance } from "./field/losses.ts";
 export { type HotSpot, quantileDensity, sharesBelow, sliceShares } from "./field/observe.ts";
 export { type CoilSolution, type Prepared, prepare, type Solution, type Tick } from "./field/prepare.ts";
+export { fieldOfRings, type RingSources, ringSources } from "./field/rings.ts";
 export { solveState } from "./field/solve.ts";
 export { type Linkage, solveApplied, solvePrescribed, type Winding } from "./field/sources.ts";
 export { type SurfaceField, surfaceField } from "./field/surface.ts";

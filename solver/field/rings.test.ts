@@ -1,0 +1,94 @@
+import { describe, expect, it } from "vitest";
+import { makeProbe } from "./evaluate.ts";
+import { COIL_TURNS, circuit, coilMaterials, coilMesh, prepared } from "./fixtures.ts";
+import { fieldOfRings, ringSources } from "./rings.ts";
+import { solveState } from "./solve.ts";
+
+const ready = prepared(coilMesh(), 2, COIL_TURNS);
+const solution = solveState(
+  ready,
+  { materials: coilMaterials(), omega: 2 * Math.PI * 3000 },
+  circuit([1, 1, 1]),
+);
+const rings = ringSources(solution);
+const size = (f: { br: { re: number; im: number }; bz: { re: number; im: number } }): number =>
+  Math.hypot(f.br.re, f.br.im, f.bz.re, f.bz.im);
+
+describe("fields summed over ring sources", () => {
+  const radius = ready.grid.exterior?.radius ?? 0;
+
+  it.each([
+    [1.3, 0.4],
+    [0.2, 1.5],
+    [0, 1.2],
+    [0, -2],
+    [3, 3],
+  ])("agree with the exterior's multipoles at (%d, %d) radii, a magnetic part included", (a, b) => {
+    // Two routes from one solution: sources inside against ψ on the outer circle.
+    const probe = makeProbe(solution);
+    const sum = fieldOfRings(rings, a * radius, b * radius);
+    const poles = probe(a * radius, b * radius);
+    expect(sum).not.toBeNull();
+    if (sum === null) return;
+    for (const k of ["br", "bz"] as const) {
+      for (const part of ["re", "im"] as const) {
+        expect(Math.abs(sum[k][part] - poles[k][part])).toBeLessThan(1e-3 * size(poles));
+      }
+    }
+  });
+
+  it("far away are those of the moment: (μ0/4π) 2m/d³ on the axis", () => {
+    // A dipole's field falls with the cube of the distance (Jackson, Classical Electrodynamics, 5.56).
+    const [d, k] = [100 * radius, 3];
+    const near = fieldOfRings(rings, 0, d);
+    const far = fieldOfRings(rings, 0, k * d);
+    expect(near === null || far === null).toBe(false);
+    if (near !== null && far !== null) expect(size(near) / size(far) / k ** 3).toBeCloseTo(1, 3);
+  });
+
+  it("are refused where a source is too near for a sum", () => {
+    const [a, z] = [rings.cells[0], rings.cells[1]];
+    expect(fieldOfRings(rings, a, z)).toBeNull();
+  });
+
+  it("off the axis and on it meet", () => {
+    const on = fieldOfRings(rings, 0, 1.4 * radius);
+    const off = fieldOfRings(rings, 1e-3 * radius, 1.4 * radius);
+    expect(on === null || off === null).toBe(false);
+    if (on !== null && off !== null) expect(off.bz.re / on.bz.re).toBeCloseTo(1, 4);
+  });
+});
+
+describe("one thin ring", () => {
+  it("on its axis: μ0 I a²/(2 d³), Biot and Savart", () => {
+    const source = {
+      sources: Float64Array.from([0.1, 0, 2, 1, 0, 0, 0, 0]),
+      cells: Float64Array.from([0.1, 0, 1e-3]),
+    };
+    const z = 0.07;
+    const exact = (4e-7 * Math.PI * 0.1 ** 2) / (2 * Math.hypot(0.1, z) ** 3);
+    const on = fieldOfRings(source, 0, z);
+    expect((on?.bz.re ?? 0) / (2 * exact)).toBeCloseTo(1, 12);
+    expect((on?.bz.im ?? 0) / exact).toBeCloseTo(1, 12);
+    const off = fieldOfRings(source, 1e-4, z);
+    expect((off?.bz.re ?? 0) / (2 * exact)).toBeCloseTo(1, 5);
+  });
+
+  it("a dipole ring on the axis: the gradient of two opposed rings", () => {
+    // m along z equals a small closed loop of current: two rings of radii a ± ε, currents ∓ m/(2ε·2πa)… as ψ of a magnetised shell.
+    const [a, z, eps] = [0.1, 0.05, 1e-4];
+    const moment = 1;
+    const current = moment / (2 * Math.PI * a) / (2 * eps);
+    const dipole = {
+      sources: Float64Array.from([a, 0, 0, 0, 0, 0, moment, 0]),
+      cells: Float64Array.from([a, 0, 1e-3]),
+    };
+    const loops = {
+      sources: Float64Array.from([a - eps, 0, -current, 0, 0, 0, 0, 0, a + eps, 0, current, 0, 0, 0, 0, 0]),
+      cells: Float64Array.from([a, 0, 1e-3]),
+    };
+    const [p, q] = [fieldOfRings(dipole, 0.03, z), fieldOfRings(loops, 0.03, z)];
+    expect((p?.bz.re ?? 0) / (q?.bz.re ?? 1)).toBeCloseTo(1, 3);
+    expect((p?.br.re ?? 0) / (q?.br.re ?? 1)).toBeCloseTo(1, 3);
+  });
+});
