@@ -120,8 +120,8 @@ function orderOf(bodies: readonly Body[]): number {
   return sharp ? 4 / 3 : 2;
 }
 
-/** Order of densities and surface fields. */
-const LOCAL_ORDER = 1;
+/** Order of densities and surface fields: the square of a field that grows as distance^(−1/3) towards an edge sums up slowly. */
+const LOCAL_ORDER = 1 / 2;
 
 /** R as the sum of the regions' powers, X as that of their energies and the energy outside. */
 function addTerminals(table: Table, state: State, { solution, losses }: Solved, order: number): void {

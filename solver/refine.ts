@@ -3,7 +3,7 @@
  *
  * bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) / ((n/m)^p − 1), levels m < n the last two, c_i the parts q is the sum of.
  * An error that falls at least as h^p is bounded by it (Richardson). Smooth fields fall as h⁴ in powers and energies; p = 2 allows for
- * conductors' edges, 4/3 for sharp edges of magnetic bodies (field ∝ distance^(−1/3), energy h^(4/3)), 1 for values at a place. Where two
+ * conductors' edges, 4/3 for sharp edges of magnetic bodies (field ∝ distance^(−1/3), energy h^(4/3)), 1/2 for values at a place. Where two
  * parts of the error cancel in q_n − q_m by chance they do not in every c_i. The grid reaches to infinity, so there is no outer boundary to
  * allow for; the direct solution's own error is far below (its residual is reported).
  */
