@@ -108,7 +108,9 @@ export function limitOfHalves(figures: readonly (readonly Figure[])[]): Figure[]
     const column = figures.map((row) => row[i]!);
     return {
       value: column.reduce((sum, f, k) => sum + weights[k]! * f.value, 0),
-      bar: column.reduce((sum, f, k) => sum + Math.abs(weights[k]!) * (f.bar ?? 0), 0),
+      bar: column.some((f) => f.bar === null)
+        ? null
+        : column.reduce((sum, f, k) => sum + Math.abs(weights[k]!) * (f.bar ?? 0), 0),
     };
   });
 }

@@ -36,7 +36,7 @@ function rows(id: string, constants: Constants): Row[] {
   const c = checkValue("inductance", id);
   const a = c.input("a") * constants.length;
   const r = c.input("r_wire") * constants.length;
-  const name = `r/a = ${c.input("r_wire") / c.input("a")}`;
+  const name = `r/a = ${(c.input("r_wire") / c.input("a")).toPrecision(1)}`;
   const low = uniform(a, r, constants);
   const [l, phi] = limitOfHalves(DEPTHS.map((d) => atDepth(a, r, (2 * r) / d, constants)));
   return [
