@@ -202,8 +202,8 @@ export function slantedMesh(): PatchMesh {
     [2, 1],
   ];
   const quads = [
-    [0, 3, 4, 1],
     [1, 4, 8, 5],
+    [0, 3, 4, 1],
     [1, 5, 6, 2],
     [3, 7, 8, 4],
     [5, 8, 9, 6],

@@ -80,6 +80,21 @@ describe("heat of a rod in a slow uniform field", () => {
   });
 });
 
+describe("heat of a rod whose magnetisation lags", () => {
+  // H = B/µ0 passes along the rod unchanged: p = ω Im(ν) |B_in|²/µ0 with B_in = B/ν (from P = ½ Re ∮ of the complex energy; Landau & Lifshitz §80).
+  it("is ω µ0 µ'' H² everywhere", () => {
+    const mesh = tensorPatches([0, 0.004, A, 0.02], [0, HEIGHT], (r) => (r < A ? 1 : 0));
+    const lagging = { conductivity: 0, reluctivity: { re: 0.02, im: 0.001 }, turn: -1 };
+    const s = solveApplied(prepared(mesh, 1, [-1, -1]), { materials: [AIR, lagging], omega: 1e4 }, B);
+    const expected = (1e4 * 0.001 * (B / Math.hypot(0.02, 0.001)) ** 2) / MU0;
+    const { density, cornerDensity } = heatSampler(s, 3)(0);
+    for (const p of [...density, ...cornerDensity]) expect(Math.abs(p / expected - 1)).toBeLessThan(1e-9);
+    expect(Math.abs(lossesOf(s).regionPower[1] / (expected * Math.PI * A * A * HEIGHT) - 1)).toBeLessThan(
+      1e-12,
+    );
+  });
+});
+
 describe("heat in a thin skin", () => {
   // a/δ = 30: p ~ e^{−2x/δ} to O(δ/a); the share within d is 1 − e^{−2d/δ} (Smythe, Static and Dynamic Electricity, ch. 10), here to 2 %.
   it("lies within half, one and two skin depths by 63, 86 and 98 %", () => {
