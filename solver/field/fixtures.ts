@@ -21,27 +21,8 @@ export function circuit(sense: readonly number[], path: readonly number[] = sens
   return { turns: sense.length, path: Int32Array.from(path), sense: Int8Array.from(sense) };
 }
 
-/** Lines from a to b whose first step is `first`, growing by `ratio` a step, ending exactly at b. */
-export function graded(a: number, b: number, first: number, ratio: number): number[] {
-  const steps: number[] = [first];
-  let sum = first;
-  while (sum < Math.abs(b - a) * (1 - 1e-9)) {
-    const step = first * ratio ** steps.length;
-    steps.push(step);
-    sum += step;
-  }
-  const lines = [a];
-  let at = 0;
-  for (const step of steps) {
-    at += step;
-    lines.push(a + ((b - a) * at) / sum);
-  }
-  lines[lines.length - 1] = b;
-  return lines;
-}
-
 /**
- * Tensor patches over [0, r_max] × [−z_max, z_max] (z lines symmetric about 0 ends) set inside a half disc of radius R about z = 0, with
+ * Tensor patches over [0, r_max] × [z_min, z_max] set inside a half disc of radius R about z = 0, with
  * `layers` rings of patches between the rectangle and the circle. The rings are region 0.
  */
 export function openMesh(
@@ -130,7 +111,7 @@ export function coilMaterials(resistivity = 2.5e-7, mu = 20): RegionMaterial[] {
 
 /**
  * Half disc of radius R about the origin, cut by half circles of the given radii (ascending, the last is R): region k between
- * the (k − 1)th and the kth, a square core inside the first. `sectors` patches along the core's three sides each … 4 × sectors in all.
+ * the (k − 1)th and the kth, a square core inside the first; 4 × `sectors` patches around.
  */
 export function ballMesh(radii: readonly number[], sectors: number): PatchMesh {
   const c = radii[0] / 2;
