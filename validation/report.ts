@@ -11,7 +11,8 @@ const HEAD = `# What the solver is checked against
 Written by \`npm run validate\`. Each figure of a named source is computed by this project and compared: "difference" is computed
 against expected, "our bar" the project's own error bar, both relative to the expected figure unless the row says absolute.
 A row agrees when the difference stays within its tolerance; why the tolerance is what it is stands above each table.
-Sources marked as formulas from memory, or read second-hand, are named as such in \`validation/tables\`. In \`npm test\` every
+Behind each source stands how its figures came: computed from its formula, read (often second-hand) or from memory; \`validation/tables\`
+says more. In \`npm test\` every
 check also runs with one constant spoiled, and must turn red.
 `;
 

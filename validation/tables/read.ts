@@ -36,7 +36,7 @@ export interface CheckValue {
   readonly description: string;
   /** "computed", "read" or "memory"; see the table. */
   readonly provenance: string;
-  /** Who published the formula or the value, one line. */
+  /** Who published the formula or the value, and the figures' provenance, one line. */
   readonly source: string;
   /** One input by name; a list gives its `index`-th entry. */
   input(name: string, index?: number): number;
@@ -73,7 +73,7 @@ export function checkValue(table: TableName, id: string): CheckValue {
     id,
     description: found.description,
     provenance: found.provenance,
-    source: named.length === 0 ? "computed independently of this project's solver" : named.join("; "),
+    source: `${named.length === 0 ? "computed independently of this solver" : named.join("; ")} [figures: ${found.provenance}]`,
     input: (name, index = 0) => pick(found.inputs, id, name, index),
     expected: (name, index = 0) => pick(found.expected, id, name, index),
   };
