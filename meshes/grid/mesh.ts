@@ -2,12 +2,13 @@
  * Shapes and domain → patches: sides sampled by the wanted sizes, layers inside conductors, the rest filled, every face cut
  * into quadrilaterals at the middles of its edges. What comes out wrong anywhere is tried again with smaller cells there.
  */
-import { type ArcOfEdge, cutGrid, type Grid, makePatchMesh, type PatchMesh } from "../../solver/index.ts";
+import { type ArcOfEdge, makePatchMesh, type PatchMesh } from "../../solver/index.ts";
 import { type FillEdge, FillError, fill } from "./fill.ts";
 import { type Layers, makeLayers } from "./layers.ts";
 import { AIR, type Arc, type Domain, OUTSIDE, type RegionTraits, type Shape } from "./shape.ts";
 import { makePlane, type Plane } from "./sides.ts";
 import { makeSizing, type Sizing, sampleSide } from "./sizes.ts";
+import { badPatches } from "./soundness.ts";
 import type { Places } from "./thickness.ts";
 
 export interface MeshInput {
@@ -35,7 +36,7 @@ export function makeMesh(input: MeshInput): PatchMesh {
       const bad = badPatches(mesh);
       if (bad.length === 0)
         return input.domain.kind === "open" && input.domain.mirror ? reflect(mesh, input) : mesh;
-      for (const { r, z, size } of bad) extra.push([r, z, size / 3]);
+      for (const { r, z, size } of bad) extra.push([r, z, size / (3 * 1.6 ** attempt)]);
       thin.push(bad.filter((b) => Number.isFinite(input.traits[b.region]?.skinDepth)).map((b) => [b.r, b.z]));
     } catch (error) {
       if (!(error instanceof FillError)) throw error;
@@ -275,58 +276,6 @@ function compact(
     [...kept.values()],
     domain.kind === "open" ? { centreZ: 0, radius: domain.radius } : null,
   );
-}
-
-/** Least sine of a corner's angle, in a patch cut in two, for it to count as sound. */
-const LEAST_SINE = 1e-3;
-
-interface BadCell {
-  readonly r: number;
-  readonly z: number;
-  readonly size: number;
-  readonly region: number;
-}
-
-/** Every cell with a corner that is turned over or flat once cut. */
-function badPatches(mesh: PatchMesh): BadCell[] {
-  return [1, 2].flatMap((level) => badCells(cutGrid(mesh, level)));
-}
-
-function badCells(grid: Grid): BadCell[] {
-  const bad: BadCell[] = [];
-  const quad = new Int32Array(4);
-  for (let c = 0; c < grid.cellRegion.length; c++) {
-    let sound = true;
-    for (let k = 0; k < 4 && sound; k++) {
-      const at = c * 9 + (k % 2) + 3 * (k >> 1);
-      quad[0] = grid.cellNodes[at];
-      quad[1] = grid.cellNodes[at + 1];
-      quad[2] = grid.cellNodes[at + 4];
-      quad[3] = grid.cellNodes[at + 3];
-      for (let i = 0; i < 4; i++) {
-        const p = quad[i];
-        const q = quad[(i + 1) % 4];
-        const o = quad[(i + 3) % 4];
-        const ur = grid.r[q] - grid.r[p];
-        const uz = grid.z[q] - grid.z[p];
-        const vr = grid.r[o] - grid.r[p];
-        const vz = grid.z[o] - grid.z[p];
-        if (ur * vz - uz * vr <= LEAST_SINE * Math.hypot(ur, uz) * Math.hypot(vr, vz)) sound = false;
-      }
-    }
-    if (!sound) {
-      const a = grid.cellNodes[c * 9];
-      const b = grid.cellNodes[c * 9 + 8];
-      const middle = grid.cellNodes[c * 9 + 4];
-      bad.push({
-        r: grid.r[middle],
-        z: grid.z[middle],
-        size: Math.hypot(grid.r[a] - grid.r[b], grid.z[a] - grid.z[b]),
-        region: grid.cellRegion[c],
-      });
-    }
-  }
-  return bad;
 }
 
 /** Both halves of a mesh made for z ≥ 0. */

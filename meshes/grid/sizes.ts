@@ -78,6 +78,7 @@ export function makeSizing(
   const field = new SizeField(0.4);
   for (const [r, z, h] of extra) field.add(r, z, h);
   addCorners(plane, traits, field);
+  addArcEnds(plane, field);
   const stops: Stop[] = [];
   plane.sides.forEach((side, index) => {
     const internal = side.shape >= 0 && shapes[side.shape].around !== AIR;
@@ -92,6 +93,14 @@ export function makeSizing(
     });
   });
   return { field, stops: stops.sort((a, b) => a.gap - b.gap) };
+}
+
+/** Ends of arcs as fine as the arcs themselves: where a wire crosses the mirror plane, the plane's own sides must start as fine. */
+function addArcEnds({ nodes, sides }: Plane, field: SizeField): void {
+  for (const { arc, a, b, kind } of sides) {
+    if (arc === null || kind !== "surface") continue;
+    for (const v of [a, b]) field.add(nodes.r[v], nodes.z[v], ARC_SHARE * arc.radius);
+  }
 }
 
 /** Small cells at the corners of conducting and magnetic regions. */

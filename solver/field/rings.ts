@@ -12,14 +12,19 @@
  */
 import { MU0 } from "../constants.ts";
 import type { Complex } from "../types.ts";
-import { fieldAt } from "./axis.ts";
+import { innerTables } from "./axis.ts";
 import type { Solution } from "./prepare.ts";
-import { emptyTable, NODES, shapeAt } from "./shape.ts";
+import { NODES } from "./shape.ts";
 import { reluctivityOf } from "./system.ts";
 
 /** Three-point Gauss rule on −1 … 1. */
-const X = [-Math.sqrt(0.6), 0, Math.sqrt(0.6)] as const;
-const W = [5 / 9, 8 / 9, 5 / 9] as const;
+const X = [-Math.sqrt(0.6), 0, Math.sqrt(0.6)];
+const W = [5 / 9, 8 / 9, 5 / 9];
+/** The 3 × 3 points of a cell. */
+const POINTS = 9;
+const XI = [...X, ...X, ...X];
+const ETA = X.flatMap((x) => [x, x, x]);
+const WEIGHT = W.flatMap((w) => W.map((v) => v * w));
 /** Step of the differences, in distances to the nearest source. */
 const STEP = 0.02;
 /** Numbers a source: a, z, dI (re, im), M_ρ dV (re, im), M_z dV (re, im). */
@@ -38,73 +43,90 @@ export interface RingSources {
 /** All currents and magnetisation of a solution. */
 export function ringSources(solution: Solution): RingSources {
   const { grid } = solution.prepared;
-  const sources: number[] = [];
-  const cells: number[] = [];
+  const { materials } = solution;
   const nu = new Float64Array(2);
-  for (let c = 0; c < grid.cellRegion.length; c++) {
-    const sigma = solution.materials[grid.cellRegion[c]].conductivity;
-    reluctivityOf(solution, grid.cellRegion[c], c, nu);
-    if (sigma === 0 && nu[0] === 1 && nu[1] === 0) continue;
+  const holds = (c: number): boolean => {
+    const region = grid.cellRegion[c];
+    reluctivityOf(solution, region, c, nu);
+    return materials[region].conductivity > 0 || nu[0] !== 1 || nu[1] !== 0;
+  };
+  const list = Array.from(grid.cellRegion.keys()).filter(holds);
+  const sources = new Float64Array(list.length * POINTS * WIDTH);
+  const cells = new Float64Array(list.length * 3);
+  const read = makeReader(solution);
+  list.forEach((c, k) => {
     const middle = grid.cellNodes[c * NODES + 4];
     let reach = 0;
     for (let i = 0; i < NODES; i++) {
       const node = grid.cellNodes[c * NODES + i];
       reach = Math.max(reach, Math.hypot(grid.r[node] - grid.r[middle], grid.z[node] - grid.z[middle]));
     }
-    cells.push(grid.r[middle], grid.z[middle], (1 + CLEAR) * reach);
-    addCell(solution, c, sigma, nu, sources);
-  }
-  return { sources: Float64Array.from(sources), cells: Float64Array.from(cells) };
+    cells[3 * k] = grid.r[middle];
+    cells[3 * k + 1] = grid.z[middle];
+    cells[3 * k + 2] = (1 + CLEAR) * reach;
+    read(c, sources, k * POINTS * WIDTH);
+  });
+  return { sources, cells };
 }
 
-const MAP = emptyTable(1);
-const FIELD = emptyTable(1);
-
-/** The nine sources of one cell. */
-function addCell(solution: Solution, c: number, sigma: number, nu: Float64Array, out: number[]): void {
-  const { grid, integrals, system } = solution.prepared;
-  const turn = system.turnOfCell[c];
-  const [uRe, uIm] = turn < 0 ? [0, 0] : [solution.u.re[turn], solution.u.im[turn]];
+/** Writes the nine sources of a cell. Long for one pass over the nodes a point. */
+function makeReader(solution: Solution): (c: number, out: Float64Array, at: number) => void {
+  const { grid, system } = solution.prepared;
+  const { psi, u, omega, materials } = solution;
+  const tables = innerTables(grid, XI, ETA);
   const s = new Float64Array(NODES);
-  for (let i = 0; i < NODES; i++) s[i] = grid.r[grid.cellNodes[c * NODES + i]] ** 2;
-  for (let j = 0; j < 3; j++) {
-    for (let k = 0; k < 3; k++) {
-      shapeAt(integrals.kind[c], X[k], X[j], MAP);
-      fieldAt(integrals.kind[c], integrals.touch[c], s, X[k], X[j], FIELD);
+  const nu = new Float64Array(2);
+  return (c, out, from) => {
+    const { geometry: map, field: shape } = tables(c);
+    const first = c * NODES;
+    for (let i = 0; i < NODES; i++) s[i] = grid.r[grid.cellNodes[first + i]] ** 2;
+    const sigma = materials[grid.cellRegion[c]].conductivity;
+    const turn = system.turnOfCell[c];
+    reluctivityOf(solution, grid.cellRegion[c], c, nu);
+    for (let p = 0; p < POINTS; p++) {
       let [S, Z, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0, 0];
-      const re = [-uRe, 0, 0];
-      const im = [-uIm, 0, 0];
+      let [x, xXi, xEta] = [turn < 0 ? 0 : -u.re[turn], 0, 0];
+      let [y, yXi, yEta] = [turn < 0 ? 0 : -u.im[turn], 0, 0];
       for (let i = 0; i < NODES; i++) {
-        const node = grid.cellNodes[c * NODES + i];
-        S += MAP.n[i] * s[i];
-        Z += MAP.n[i] * grid.z[node];
-        sXi += MAP.dXi[i] * s[i];
-        sEta += MAP.dEta[i] * s[i];
-        zXi += MAP.dXi[i] * grid.z[node];
-        zEta += MAP.dEta[i] * grid.z[node];
-        const [x, y] = [solution.psi.re[node], solution.psi.im[node]];
-        re[0] += FIELD.n[i] * x;
-        re[1] += FIELD.dXi[i] * x;
-        re[2] += FIELD.dEta[i] * x;
-        im[0] += FIELD.n[i] * y;
-        im[1] += FIELD.dXi[i] * y;
-        im[2] += FIELD.dEta[i] * y;
+        const k = p * NODES + i;
+        const node = grid.cellNodes[first + i];
+        const z = grid.z[node];
+        S += map.n[k] * s[i];
+        Z += map.n[k] * z;
+        sXi += map.dXi[k] * s[i];
+        sEta += map.dEta[k] * s[i];
+        zXi += map.dXi[k] * z;
+        zEta += map.dEta[k] * z;
+        const re = psi.re[node];
+        const im = psi.im[node];
+        x += shape.n[k] * re;
+        xXi += shape.dXi[k] * re;
+        xEta += shape.dEta[k] * re;
+        y += shape.n[k] * im;
+        yXi += shape.dXi[k] * im;
+        yEta += shape.dEta[k] * im;
       }
       const det = sXi * zEta - sEta * zXi;
       const a = Math.sqrt(S);
-      const area = W[j] * W[k] * det;
-      const current = (solution.omega * sigma * area) / (2 * S);
-      const br = (v: readonly number[]): number => -(v[2] * sXi - v[1] * sEta) / (det * a);
-      const bz = (v: readonly number[]): number => (2 * (v[1] * zEta - v[2] * zXi)) / det;
-      const volume = (Math.PI * area) / MU0;
-      const moment = (x: number, y: number): [number, number] => [
-        volume * ((1 - nu[0]) * x + nu[1] * y),
-        volume * ((1 - nu[0]) * y - nu[1] * x),
-      ];
-      out.push(a, Z, current * im[0], -current * re[0]);
-      out.push(...moment(br(re), br(im)), ...moment(bz(re), bz(im)));
+      const area = WEIGHT[p] * det;
+      const current = (omega * sigma * area) / (2 * S);
+      // B_r and B_z times dV/μ0 = π ds dz/μ0.
+      const volume = (Math.PI * WEIGHT[p]) / MU0;
+      const rRe = (-volume * (xEta * sXi - xXi * sEta)) / a;
+      const rIm = (-volume * (yEta * sXi - yXi * sEta)) / a;
+      const zRe = 2 * volume * (xXi * zEta - xEta * zXi);
+      const zIm = 2 * volume * (yXi * zEta - yEta * zXi);
+      const at = from + p * WIDTH;
+      out[at] = a;
+      out[at + 1] = Z;
+      out[at + 2] = current * y;
+      out[at + 3] = -current * x;
+      out[at + 4] = (1 - nu[0]) * rRe + nu[1] * rIm;
+      out[at + 5] = (1 - nu[0]) * rIm - nu[1] * rRe;
+      out[at + 6] = (1 - nu[0]) * zRe + nu[1] * zIm;
+      out[at + 7] = (1 - nu[0]) * zIm - nu[1] * zRe;
     }
-  }
+  };
 }
 
 /** Clear distance from a point to the sources' cells; negative when it is not clear of them. */
