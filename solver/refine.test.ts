@@ -1,0 +1,81 @@
+import { describe, expect, it } from "vitest";
+import { barsBetween, type GridAnswer, nextLevel, refine } from "./refine.ts";
+
+/** What a grid of level n would say of a quantity whose error is a n⁻⁴ + b n^(−p), and of its two parts. */
+function answer(level: number, truth: number, a: number, b: number, order: number): GridAnswer {
+  const smooth = a / level ** 4;
+  const sharp = b / level ** order;
+  return {
+    level,
+    unknowns: 100 * level ** 2,
+    values: new Map([["q", truth + smooth + sharp]]),
+    parts: new Map([["q", [truth / 2 + smooth, truth / 2 + sharp]]]),
+    orders: new Map([["q", order]]),
+  };
+}
+
+const error = (x: GridAnswer, truth: number): number => Math.abs((x.values.get("q") ?? 0) - truth);
+
+describe("bars from two grids", () => {
+  it.each([
+    [1, 0, 2],
+    [0, 1, 2],
+    [1, -1, 2],
+    [1, -0.2, 4 / 3],
+    [-0.3, 1, 4 / 3],
+    [0, 1, 1 / 2],
+  ])("hold where the error is %d n⁻⁴ and %d n^−p, p = %d", (a, b, order) => {
+    for (const [m, n] of [
+      [1, 2],
+      [2, 3],
+      [2, 4],
+    ] as const) {
+      const [coarse, fine] = [answer(m, 10, a, b, order), answer(n, 10, a, b, order)];
+      const bar = barsBetween(coarse, fine).get("q") ?? 0;
+      expect(bar * (1 + 1e-12)).toBeGreaterThanOrEqual(error(fine, 10));
+      // Not padded: within a factor of what the larger part of the error could be.
+      expect(bar).toBeLessThan(20 * (Math.abs(a) / m ** 4 + Math.abs(b) / m ** order));
+    }
+  });
+
+  it("do not vanish where the two parts of the error cancel by chance", () => {
+    // a (1 − 2⁻⁴) = b (1 − 2⁻²): level 1 and 2 agree to the last digit, and are both wrong.
+    const [a, b] = [1, -(1 - 2 ** -4) / (1 - 2 ** -2)];
+    const [coarse, fine] = [answer(1, 10, a, b, 2), answer(2, 10, a, b, 2)];
+    expect((fine.values.get("q") ?? 0) - (coarse.values.get("q") ?? 0)).toBeCloseTo(0, 14);
+    expect(barsBetween(coarse, fine).get("q")).toBeGreaterThan(error(fine, 10));
+  });
+});
+
+describe("refinement", () => {
+  const solveAt = (level: number): GridAnswer => answer(level, 10, 1, 0.1, 2);
+  const excess = (asked: number) => (_: GridAnswer, bars: ReadonlyMap<string, number>) =>
+    (bars.get("q") ?? 0) / asked;
+
+  it("goes on until what is asked holds, and it does", () => {
+    const found = refine(solveAt, (n) => 100 * n * n, excess(1e-3), 1e6);
+    expect(found.met).toBe(true);
+    expect(found.bars.get("q")).toBeLessThanOrEqual(1e-3);
+    expect(error(found.finest, 10)).toBeLessThanOrEqual(1e-3);
+  });
+
+  it("stops at the limit of unknowns and says so, with the bars it has", () => {
+    const found = refine(solveAt, (n) => 100 * n * n, excess(1e-9), 2000);
+    expect(found.met).toBe(false);
+    expect(found.finest.unknowns).toBeLessThanOrEqual(2000);
+    expect(error(found.finest, 10)).toBeLessThanOrEqual(found.bars.get("q") ?? 0);
+  });
+
+  it("is content with two grids where they suffice", () => {
+    expect(refine(solveAt, (n) => 100 * n * n, excess(10), 1e6).grids).toBe(2);
+  });
+
+  it("never more than doubles the level, and always raises it", () => {
+    for (const factor of [1.01, 2, 8, 1e6]) {
+      for (const level of [2, 3, 5]) {
+        expect(nextLevel(level, factor)).toBeGreaterThan(level);
+        expect(nextLevel(level, factor)).toBeLessThanOrEqual(2 * level);
+      }
+    }
+  });
+});
