@@ -180,7 +180,7 @@ function numericsLines({ numerics: n, design }: Result): string[] {
     ? `the asked ${asked} holds`
     : `the asked ${asked} was NOT reached, so go by the ± of each figure`;
   return wrap(
-    `Each ± holds in at least 95 of 100 designs; ${met}. ${n.unknowns} unknowns on the finest of ${n.grids} grids, ` +
+    `Each ± should hold in at least 95 of 100 designs; ${met}. ${n.unknowns} unknowns on the finest of ${n.grids} grids, ` +
       `${n.seconds.toFixed(1)} s, ${Math.round(n.peakMemoryBytes / 1e6)} MB, power balance ${n.powerBalance.toExponential(0)}.`,
   );
 }
