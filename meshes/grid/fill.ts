@@ -4,54 +4,28 @@
  * Refinement after L. P. Chew, "Guaranteed-quality triangular meshes", Cornell TR 89-983 (1989; from memory), with a size that
  * grows away from the edges; the edges themselves are never split.
  */
-import Constrainautor from "@kninnug/constrainautor";
-import Delaunator from "delaunator";
-
-/** A straight edge between two points (by index) and the labels on its two sides; −1 = leave empty. */
-export interface FillEdge {
-  readonly a: number;
-  readonly b: number;
-  readonly left: number;
-  readonly right: number;
-}
-
-export interface Filling {
-  /** All points: the given ones first. */
-  readonly x: number[];
-  readonly y: number[];
-  /** Triangles and quadrilaterals, counter-clockwise corner ids. */
-  readonly faces: number[][];
-  readonly labels: number[];
-}
+import { type Filling, FLAT_EAR, pairUp } from "./pairing.ts";
+import {
+  edgeKey,
+  edgeMap,
+  type FillEdge,
+  nextHalf,
+  type Triangulation,
+  triangulate,
+} from "./triangulation.ts";
 
 /** Growth of the edge length per unit of distance from the given edges. */
 const GROWTH = 0.65;
+
 /** A triangle is too large when its circumradius exceeds this share of the wanted edge length (0.577 = equilateral). */
 const LARGE = 0.8;
+
 /** Most rounds of refinement; it ends by itself when nothing is too large any more. */
 const ROUNDS = 80;
+
 const SMOOTHINGS = 3;
+
 const EAR_ROUNDS = 3;
-/** Cosine of the angle from which a corner between two given edges is too flat to be a corner of one face. */
-const FLAT_EAR = -0.5;
-/** Least quality (1 = rectangle, 0 = an angle of 0° or 180°) of a quadrilateral made of two triangles. */
-const LEAST_QUAD = 0.3;
-
-/** Thrown when the edges cross or contradict each other: the caller makes the layers thinner or the cells smaller. */
-export class FillError extends Error {
-  constructor(
-    readonly x: number,
-    readonly y: number,
-  ) {
-    super("edges of the filling cross");
-  }
-}
-
-interface Triangulation {
-  readonly triangles: Uint32Array;
-  readonly halfedges: Int32Array;
-  readonly label: Int32Array;
-}
 
 export function fill(
   px: readonly number[],
@@ -78,16 +52,6 @@ export function fill(
     net = triangulate(x, y, edges);
   }
   return pairUp(net, x, y, edges);
-}
-
-const nextHalf = (e: number): number => (e % 3 === 2 ? e - 2 : e + 1);
-
-function edgeKey(a: number, b: number): number {
-  return a < b ? a * 4194304 + b : b * 4194304 + a;
-}
-
-function edgeMap(edges: readonly FillEdge[]): Map<number, FillEdge> {
-  return new Map(edges.map((e) => [edgeKey(e.a, e.b), e]));
 }
 
 /** Edge length wanted at a point: min over given edges' ends of (their length + GROWTH · distance), and the cap. */
@@ -121,71 +85,6 @@ function sizeFunction(
     }
     return best;
   };
-}
-
-function triangulate(x: readonly number[], y: readonly number[], edges: readonly FillEdge[]): Triangulation {
-  const coords = new Float64Array(2 * x.length);
-  for (let i = 0; i < x.length; i++) {
-    coords[2 * i] = x[i];
-    coords[2 * i + 1] = y[i];
-  }
-  const del = new Delaunator(coords);
-  let at: FillEdge | undefined;
-  try {
-    const constrained = new Constrainautor(del);
-    for (at of edges) constrained.constrainOne(at.a, at.b);
-    constrained.delaunify(true);
-  } catch {
-    throw new FillError(
-      at === undefined ? 0 : (x[at.a] + x[at.b]) / 2,
-      at === undefined ? 0 : (y[at.a] + y[at.b]) / 2,
-    );
-  }
-  return { triangles: del.triangles, halfedges: del.halfedges, label: labelTriangles(del, x, y, edges) };
-}
-
-/** The label of every triangle, spread from the labelled sides of the edges. */
-function labelTriangles(
-  del: { triangles: Uint32Array; halfedges: Int32Array },
-  x: readonly number[],
-  y: readonly number[],
-  edges: readonly FillEdge[],
-): Int32Array {
-  const { triangles, halfedges } = del;
-  const UNKNOWN = -2;
-  const label = new Int32Array(triangles.length / 3).fill(UNKNOWN);
-  const byEnds = edgeMap(edges);
-  const queue: number[] = [];
-  const fixed = new Uint8Array(triangles.length);
-  for (let e = 0; e < triangles.length; e++) {
-    const p = triangles[e];
-    const q = triangles[nextHalf(e)];
-    const edge = byEnds.get(edgeKey(p, q));
-    if (edge === undefined) continue;
-    fixed[e] = 1;
-    const o = triangles[nextHalf(nextHalf(e))];
-    const side = (x[edge.b] - x[edge.a]) * (y[o] - y[edge.a]) - (y[edge.b] - y[edge.a]) * (x[o] - x[edge.a]);
-    const t = Math.floor(e / 3);
-    const own = side > 0 ? edge.left : edge.right;
-    if (label[t] !== UNKNOWN && label[t] !== own) throw new FillError(x[o], y[o]);
-    if (label[t] === UNKNOWN) queue.push(t);
-    label[t] = own;
-  }
-  for (let k = 0; k < queue.length; k++) {
-    const t = queue[k];
-    for (let e = 3 * t; e < 3 * t + 3; e++) {
-      const twin = halfedges[e];
-      if (fixed[e] === 1 || twin < 0) continue;
-      const u = Math.floor(twin / 3);
-      if (label[u] === UNKNOWN) {
-        label[u] = label[t];
-        queue.push(u);
-      } else if (label[u] !== label[t]) {
-        throw new FillError(x[triangles[e]], y[triangles[e]]);
-      }
-    }
-  }
-  return label;
 }
 
 /**
@@ -361,89 +260,4 @@ function smooth(net: Triangulation, x: number[], y: number[], given: number): vo
       y[p] = (y[p] + my) / 2;
     }
   }
-}
-
-/** Quadrilaterals from pairs of triangles, best first; the rest stay triangles. */
-function pairUp(net: Triangulation, x: number[], y: number[], edges: readonly FillEdge[]): Filling {
-  const { triangles, halfedges, label } = net;
-  const byEnds = edgeMap(edges);
-  const pairs: { e: number; quality: number; corners: number[] }[] = [];
-  for (let e = 0; e < triangles.length; e++) {
-    const twin = halfedges[e];
-    const t = Math.floor(e / 3);
-    if (twin < e || label[t] < 0) continue;
-    const p = triangles[e];
-    const q = triangles[nextHalf(e)];
-    if (byEnds.has(edgeKey(p, q))) continue;
-    const corners = [p, triangles[nextHalf(nextHalf(twin))], q, triangles[nextHalf(nextHalf(e))]];
-    const quality = quadQuality(x, y, corners);
-    if (quality > LEAST_QUAD && !hasFlatCorner(x, y, corners, byEnds)) pairs.push({ e, quality, corners });
-  }
-  pairs.sort((a, b) => b.quality - a.quality || a.e - b.e);
-  const taken = new Uint8Array(label.length);
-  const faces: number[][] = [];
-  const labels: number[] = [];
-  const push = (corners: number[], own: number): void => {
-    faces.push(area(x, y, corners) > 0 ? corners : corners.reverse());
-    labels.push(own);
-  };
-  for (const { e, corners } of pairs) {
-    const t = Math.floor(e / 3);
-    const u = Math.floor(halfedges[e] / 3);
-    if (taken[t] === 1 || taken[u] === 1) continue;
-    taken[t] = 1;
-    taken[u] = 1;
-    push(corners, label[t]);
-  }
-  for (let t = 0; t < label.length; t++) {
-    if (label[t] >= 0 && taken[t] === 0) {
-      push([triangles[3 * t], triangles[3 * t + 1], triangles[3 * t + 2]], label[t]);
-    }
-  }
-  return { x, y, faces, labels };
-}
-
-function area(x: readonly number[], y: readonly number[], corners: readonly number[]): number {
-  let sum = 0;
-  for (let i = 0; i < corners.length; i++) {
-    const a = corners[i];
-    const b = corners[(i + 1) % corners.length];
-    sum += x[a] * y[b] - x[b] * y[a];
-  }
-  return sum / 2;
-}
-
-/** True when two given edges meet in a corner that is nearly straight. */
-function hasFlatCorner(
-  x: readonly number[],
-  y: readonly number[],
-  corners: readonly number[],
-  byEnds: ReadonlyMap<number, FillEdge>,
-): boolean {
-  return corners.some((b, i) => {
-    const a = corners[(i + 3) % 4];
-    const c = corners[(i + 1) % 4];
-    if (!byEnds.has(edgeKey(a, b)) || !byEnds.has(edgeKey(b, c))) return false;
-    const [ux, uy, vx, vy] = [x[a] - x[b], y[a] - y[b], x[c] - x[b], y[c] - y[b]];
-    return (ux * vx + uy * vy) / (Math.hypot(ux, uy) * Math.hypot(vx, vy)) < FLAT_EAR;
-  });
-}
-
-/** 1 − (largest departure from a right angle)/90°; negative when not convex. */
-function quadQuality(x: readonly number[], y: readonly number[], corners: readonly number[]): number {
-  const sign = Math.sign(area(x, y, corners));
-  let worst = 0;
-  for (let i = 0; i < 4; i++) {
-    const a = corners[(i + 3) % 4];
-    const b = corners[i];
-    const c = corners[(i + 1) % 4];
-    const ux = x[c] - x[b];
-    const uy = y[c] - y[b];
-    const vx = x[a] - x[b];
-    const vy = y[a] - y[b];
-    const cross = sign * (ux * vy - uy * vx);
-    if (cross <= 0) return -1;
-    worst = Math.max(worst, Math.abs(Math.atan2(cross, ux * vx + uy * vy) - Math.PI / 2));
-  }
-  return 1 - worst / (Math.PI / 2);
 }

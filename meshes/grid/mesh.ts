@@ -3,13 +3,14 @@
  * into quadrilaterals at the middles of its edges. What comes out wrong anywhere is tried again with smaller cells there.
  */
 import { type ArcOfEdge, makePatchMesh, type PatchMesh } from "../../solver/index.ts";
-import { type FillEdge, FillError, fill } from "./fill.ts";
+import { fill } from "./fill.ts";
 import { type Layers, makeLayers } from "./layers.ts";
 import { AIR, type Arc, type Domain, OUTSIDE, type RegionTraits, type Shape } from "./shape.ts";
 import { makePlane, type Plane } from "./sides.ts";
 import { makeSizing, type Sizing, sampleSide } from "./sizes.ts";
 import { badPatches } from "./soundness.ts";
 import type { Places } from "./thickness.ts";
+import { type FillEdge, FillError } from "./triangulation.ts";
 
 export interface MeshInput {
   readonly shapes: readonly Shape[];
