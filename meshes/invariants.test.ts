@@ -35,6 +35,43 @@ describe("grids of the gallery", () => {
   });
 });
 
+/** Designs that once came out wrong, each reduced to what did it. */
+const hard = [
+  {
+    name: "rectangular turns a three-hundredth of their width apart, corner against corner",
+    coil: {
+      conductor: { section: "rectBar", radialWidthMm: 0.26, axialHeightMm: 0.284, material: "copper" },
+      winding: { form: "helix", boreDiameterMm: 0.93, turns: 5, pitchMm: [0.285, 0.336, 0.2857, 0.2935] },
+    },
+  },
+  {
+    name: "a thin ring alone, cut by its own mirror plane",
+    coil: {
+      conductor: { section: "roundBar", outsideDiameterMm: 2, material: "copper" },
+      winding: { form: "rings", centresMm: [[500, 0]] },
+    },
+  },
+  {
+    name: "parts that touch over part of a face",
+    coil: {
+      conductor: { section: "roundTube", outsideDiameterMm: 6, wallMm: 1, material: "copper" },
+      winding: { form: "helix", boreDiameterMm: 60, turns: 3, pitchMm: 8 },
+    },
+    parts: [
+      { shape: "cylinder", diameterMm: 40, lengthMm: 20, material: { resistivityOhmM: 2e-7 } },
+      { shape: "cylinder", diameterMm: 25, lengthMm: 10, centreZMm: 15, material: { resistivityOhmM: 1e-6 } },
+    ],
+  },
+];
+
+describe("grids that once came out wrong", () => {
+  it.each(hard)("$name", (design) => {
+    const { scene } = checkDesign({ ...design, drive: { frequencyHz: 10_000, currentA: 1 } });
+    expectSound(inspect(scene, 1));
+    expectSound(inspect(scene, 3));
+  });
+});
+
 describe("grids of random scenes", () => {
   it.each(Array.from({ length: 60 }, (_, k) => 7 + 1001 * k))("seed %d is sound", (seed) => {
     expectSound(inspect(randomScene(seed), 1));

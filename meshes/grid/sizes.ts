@@ -26,6 +26,8 @@ const CORNER_SHARE = 0.1;
 const ARC_SHARE = 0.62;
 /** Widest angle one edge of the filling may span: its bulge must stay inside the faces beside it, rad. */
 const WIDEST_ARC = 0.8;
+/** Least cell at a corner that faces another across a narrow gap, in lengths of its side. */
+const MOUTH = 0.03;
 /** A round turn farther from a side than this, in radii, needs no nodes that face each other. */
 const FACING = 4;
 /** Turns of direction below this are a bend, not a corner, rad. */
@@ -212,8 +214,12 @@ function faceCorner(
 ): void {
   const side = plane.sides[index];
   const near = nearestOnSide(side, plane.nodes, r, z);
-  if (near.t <= 1e-9 || near.t >= 1 - 1e-9 || near.distance < 1e-9) return;
+  if (near.distance < 1e-9) return;
   const [pr, pz] = sidePoint(side, plane.nodes, near.t);
+  if (near.t <= 1e-9 || near.t >= 1 - 1e-9) {
+    field.add(pr, pz, Math.max(0.7 * near.distance, MOUTH * side.length));
+    return;
+  }
   const share =
     side.arc === null ? near.distance : Math.min(near.distance, Math.sqrt(side.arc.radius * near.distance));
   field.add(pr, pz, 0.7 * share);
