@@ -74,6 +74,25 @@ describe("one thin ring", () => {
     expect((off?.bz.re ?? 0) / (2 * exact)).toBeCloseTo(1, 5);
   });
 
+  it.each([1e-3, 1e-4, 1e-6, 1e-8])(
+    "%d m off its axis: the axis' field and half its slope, as div B = 0 asks",
+    (r) => {
+      const [a, z] = [0.1, 0.07];
+      const source = {
+        sources: Float64Array.from([a, 0, 1, 0, 0, 0, 0, 0]),
+        cells: Float64Array.from([a, 0, 1e-3]),
+      };
+      const d = Math.hypot(a, z);
+      const axis = (4e-7 * Math.PI * a * a) / (2 * d ** 3);
+      const found = fieldOfRings(source, r, z);
+      // B_z = axis + O(r²); B_r = −(r/2) d(axis)/dz = (3rz/2d²) axis, to the digits that B as a whole has.
+      expect(Math.abs((found?.bz.re ?? 0) / axis - 1)).toBeLessThan(1e-6 + 50 * r * r);
+      expect(Math.abs((found?.br.re ?? 0) / axis - (3 * r * z) / (2 * d * d))).toBeLessThan(
+        1e-6 + 50 * r ** 3,
+      );
+    },
+  );
+
   it("a dipole ring on the axis: the gradient of two opposed rings", () => {
     // m along z equals a small closed loop of current: two rings of radii a ± ε, currents ∓ m/(2ε·2πa)… as ψ of a magnetised shell.
     const [a, z, eps] = [0.1, 0.05, 1e-4];

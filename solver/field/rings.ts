@@ -6,7 +6,8 @@
  *
  * M Maxwell's mutual inductance of two coaxial circles (Treatise, art. 701) and B the field at the source of 1 A in the circle (r, z)
  * (Smythe, Static and Dynamic Electricity, 7.10; from memory): the flux through a circle is what reciprocity makes of its own field.
- * B_r = −ψ_z/r and B_z = ψ_r/r by central differences of fourth order; on the axis the closed forms of a ring and of a dipole.
+ * B_r = −ψ_z/r and B_z = ψ_r/r by central differences of fourth order, across the axis where it is near (ψ is even in r); on the axis the
+ * closed forms of a ring and of a dipole.
  * dI = −jωσ(ψ − u)/(2s) ds dz, M = (1 − ν)B/µ0: what is summed are smooth functionals of ψ, so they converge as the power does, where a
  * derivative of ψ in a cell would lose two orders. Only for points clear of every source by more than its cell's size.
  */
@@ -25,7 +26,7 @@ const POINTS = 9;
 const XI = [...X, ...X, ...X];
 const ETA = X.flatMap((x) => [x, x, x]);
 const WEIGHT = W.flatMap((w) => W.map((v) => v * w));
-/** Step of the differences, in distances to the nearest source. */
+/** Step of the differences, in clear distances to the sources: near the axis a step of the order of r would lose all digits. */
 const STEP = 0.02;
 /** Numbers a source: a, z, dI (re, im), M_ρ dV (re, im), M_z dV (re, im). */
 const WIDTH = 8;
@@ -143,8 +144,8 @@ export function fieldOfRings(rings: RingSources, r: number, z: number): { br: Co
   const clear = clearance(rings, r, z);
   if (clear <= 0) return null;
   if (r < 1e-9 * clear) return { br: { re: 0, im: 0 }, bz: onAxis(rings.sources, z) };
-  const h = STEP * Math.min(clear, r);
-  const at = (dr: number, dz: number): Complex => flux(rings.sources, r + dr * h, z + dz * h);
+  const h = STEP * clear;
+  const at = (dr: number, dz: number): Complex => flux(rings.sources, Math.abs(r + dr * h), z + dz * h);
   const slope = (dr: number, dz: number): Complex => {
     const [p1, m1, p2, m2] = [at(dr, dz), at(-dr, -dz), at(2 * dr, 2 * dz), at(-2 * dr, -2 * dz)];
     const part = (k: "re" | "im"): number => (8 * (p1[k] - m1[k]) - (p2[k] - m2[k])) / (12 * h);
