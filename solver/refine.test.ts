@@ -47,6 +47,27 @@ describe("bars from two grids", () => {
   });
 });
 
+describe("answers without a number", () => {
+  const saying = (level: number, q: number): GridAnswer => ({
+    ...answer(level, 10, 1, 1, 2),
+    values: new Map([["q", q]]),
+  });
+
+  it.each([
+    [Number.NaN, 10],
+    [10, Number.NaN],
+    [10, Infinity],
+  ])("(%d, then %d) are named, not refined for ever", (a, b) => {
+    expect(() => barsBetween(saying(1, a), saying(2, b))).toThrow(/^q is /);
+  });
+
+  it("nor is a value that has lost its order, or was not there before", () => {
+    const [coarse, fine] = [answer(1, 10, 1, 1, 2), answer(2, 10, 1, 1, 2)];
+    expect(() => barsBetween(coarse, { ...fine, orders: new Map() })).toThrow(/^q is /);
+    expect(() => barsBetween({ ...coarse, values: new Map() }, fine)).toThrow(/^q is /);
+  });
+});
+
 describe("refinement", () => {
   const solveAt = (level: number): GridAnswer => answer(level, 10, 1, 0.1, 2);
   const excess = (asked: number) => (_: GridAnswer, bars: ReadonlyMap<string, number>) =>

@@ -8,6 +8,8 @@
  * allow for; the direct solution's own error is far below (its residual is reported).
  */
 
+import { SolverError } from "./errors.ts";
+
 /** What one grid says. */
 export interface GridAnswer {
   /** Cells along a patch's edge. */
@@ -15,7 +17,7 @@ export interface GridAnswer {
   readonly unknowns: number;
   /** Numbers by name; the same names on every grid. */
   readonly values: ReadonlyMap<string, number>;
-  /** Parts whose sum a value is, where it has any. */
+  /** Parts whose sum a value is, where it has any; as many on every grid. */
   readonly parts: ReadonlyMap<string, readonly number[]>;
   /** Order p at which each value's error falls at least. */
   readonly orders: ReadonlyMap<string, number>;
@@ -29,14 +31,17 @@ export interface Refined<T extends GridAnswer> {
   readonly met: boolean;
 }
 
-/** Bars of a finer answer from the one before it. */
+/** Bars (half-widths, in each value's unit) of a finer answer from the one before it. Throws SolverError `number` where there is none. */
 export function barsBetween(coarse: GridAnswer, fine: GridAnswer): Map<string, number> {
   const bars = new Map<string, number>();
   for (const [name, value] of fine.values) {
     const before = coarse.values.get(name) ?? Number.NaN;
     const moved = partsMoved(coarse.parts.get(name), fine.parts.get(name));
-    const shrink = (fine.level / coarse.level) ** (fine.orders.get(name) ?? 1) - 1;
-    bars.set(name, Math.max(Math.abs(value - before), moved) / shrink);
+    const shrink = (fine.level / coarse.level) ** (fine.orders.get(name) ?? Number.NaN) - 1;
+    const bar = Math.max(Math.abs(value - before), moved) / shrink;
+    // A bar that is no number would never shrink, and no level would be the next.
+    if (!Number.isFinite(bar)) throw new SolverError("number", `${name} is ${value} after ${before}`);
+    bars.set(name, bar);
   }
   return bars;
 }
