@@ -3,7 +3,9 @@ import { tooFine } from "./copper.ts";
 import type { Guide, Part, Solid } from "./design.ts";
 import type { Scale } from "./layout.ts";
 import { narrowestNeck, outlineFaults } from "./outlines.ts";
+import type { Xy } from "./planar.ts";
 import { type Fault, pointerTo } from "./refusal.ts";
+import { SHARPEST, sineBetween } from "./wedges.ts";
 import { figure } from "./words.ts";
 
 /** The corners of all bodies together that are taken; a round piece counts as eight. */
@@ -77,10 +79,21 @@ function edgeFaults(solid: Extract<Solid, { shape: "outline" }>, pointer: string
       });
     }
   });
+  faults.push(...points.flatMap((_, i) => axisFaults(points, i, list, scale)));
   const neck = faults.length > 0 ? null : narrowestNeck(points, scale.finest);
   if (neck !== null) {
     const what = `a neck or slot between the edges after points ${neck.edges[0]} and ${neck.edges[1]}`;
     faults.push(tooFine(list, what, neck.distance, scale));
   }
   return faults;
+}
+
+/** Fault of an edge that leaves the axis so slowly that no cell fits between. */
+function axisFaults(points: readonly Xy[], i: number, list: string, scale: Scale): Fault[] {
+  const p = points[i]!;
+  const slow = ([r, z]: Xy): boolean =>
+    r >= scale.finest && sineBetween([r, z - p[1]], [0, z - p[1]]) < SHARPEST;
+  if (p[0] !== 0 || ![points.at(i - 1)!, points[(i + 1) % points.length]!].some(slow)) return [];
+  const detail = `an edge at point ${i} (counted from 0) leaves the axis by less than 0.5 degrees`;
+  return [{ pointer: pointerTo(list, i), detail, accepted: "edges along the axis, or 0.5 degrees off it" }];
 }

@@ -7,6 +7,7 @@ import { boxAround, type Copper, type Layout, type Placed, type Scale, scaleOf }
 import { type Box, boxDistance, type Separation } from "./planar.ts";
 import type { Fault } from "./refusal.ts";
 import { type Figure, figureBox, separation } from "./shapes.ts";
+import { SHARPEST, sharpestWedge } from "./wedges.ts";
 import { figure } from "./words.ts";
 
 /** Every geometric fault of a layout, one entry each. */
@@ -138,7 +139,21 @@ function bodyAgainst(earlier: Placed, later: Placed, scale: Scale): Fault[] {
     const detail = `between ${later.label} and ${earlier.label} ${figure(worst.nearMiss)} mm are left, too fine to resolve`;
     return fault(detail, `edges and corners that touch exactly, or stay ${figure(scale.finest)} mm apart`);
   }
+  const wedge = worst.gap === 0 ? wedgeBetween(earlier, later, scale.touch) : 1;
+  if (wedge < SHARPEST) {
+    const degrees = figure((Math.asin(wedge) * 180) / Math.PI);
+    return fault(
+      `${pair} and leaves a wedge of ${degrees} degrees there, too sharp to resolve`,
+      "faces that lie on each other, or wedges of at least 0.5 degrees",
+    );
+  }
   return [];
+}
+
+/** Sine of the sharpest wedge left between the outlines of two bodies that touch. */
+function wedgeBetween(a: Placed, b: Placed, touch: number): number {
+  const outlines = (body: Placed) => body.pieces.flatMap((p) => (p.kind === "polygon" ? [p.points] : []));
+  return Math.min(1, ...outlines(a).flatMap((p) => outlines(b).map((q) => sharpestWedge(p, q, touch))));
 }
 
 /** A thousandth of the smaller sphere of two bodies, mm. */

@@ -1,10 +1,8 @@
 /** What is wrong with an outline by itself: repeated points, edges folded back, no area, a boundary that meets itself. */
 import { area, boxDistance, boxOf, pointToSegment, segmentDistance, type Xy } from "./planar.ts";
 import { type Fault, pointerTo } from "./refusal.ts";
+import { SHARPEST, sineBetween } from "./wedges.ts";
 import { figure } from "./words.ts";
-
-/** Sine of the sharpest corner taken, 0.5°. */
-const SHARPEST = Math.sin(Math.PI / 360);
 
 /** Faults of an outline's points (mm), `pointer` naming the list. Empty = a simple polygon with area. */
 export function outlineFaults(points: readonly Xy[], pointer: string): Fault[] {
@@ -61,9 +59,7 @@ function foldedCorners(points: readonly Xy[], pointer: string): Fault[] {
   const n = points.length;
   return points.flatMap((p, i) => {
     const [a, b] = [points[(i + n - 1) % n]!, points[(i + 1) % n]!];
-    const [u, v, w, x] = [p[0] - a[0], p[1] - a[1], b[0] - p[0], b[1] - p[1]];
-    const sine = Math.abs(u * x - v * w) / (Math.hypot(u, v) * Math.hypot(w, x));
-    if (u * w + v * x > 0 || sine >= SHARPEST) return [];
+    if (sineBetween([a[0] - p[0], a[1] - p[1]], [b[0] - p[0], b[1] - p[1]]) >= SHARPEST) return [];
     const detail = `the outline folds back on itself at point ${i} (counted from 0)`;
     return [{ pointer: pointerTo(pointer, i), detail, accepted: "corners of at least 0.5 degrees" }];
   });
