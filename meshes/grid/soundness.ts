@@ -1,7 +1,7 @@
 /** Whether patches stay sound however finely they are cut: no corner turned over or flat. */
 import { cutGrid, type Grid, type PatchMesh } from "../../solver/index.ts";
 
-/** Least sine of a corner's angle, in a patch cut in two, for it to count as sound. */
+/** Least sine of a corner's angle for it to count as sound: well below the sharpest wedge and corner a design may have. */
 const LEAST_SINE = 1e-3;
 
 export interface BadCell {
@@ -13,10 +13,17 @@ export interface BadCell {
 
 /** Every patch with a flat or turned corner, however finely cut: by its edges' tangents, and by its cells at the first levels. */
 export function badPatches(mesh: PatchMesh): BadCell[] {
-  return [...badCorners(mesh), ...[1, 2].flatMap((level) => badCells(cutGrid(mesh, level)))];
+  // The half mesh of a mirrored scene has no complete outer circle yet.
+  const inside = { ...mesh, outer: null, outerEdges: new Int32Array(0) };
+  return [...badCorners(mesh), ...[1, 2].flatMap((level) => badCells(cutGrid(inside, level)))];
 }
 
-/** Patches whose edges leave a corner at less than a straight angle no more: what cells at the corner tend to. */
+/** True when the corner between two sides, the second counter-clockwise of the first, is neither turned over nor flat. */
+function isSound(ur: number, uz: number, vr: number, vz: number): boolean {
+  return ur * vz - uz * vr > LEAST_SINE * Math.hypot(ur, uz) * Math.hypot(vr, vz);
+}
+
+/** Patches whose edges leave a corner in one line or turned over: what cells at the corner tend to. */
 function badCorners(mesh: PatchMesh): BadCell[] {
   const bad: BadCell[] = [];
   for (let p = 0; p < mesh.region.length; p++) {
@@ -24,7 +31,7 @@ function badCorners(mesh: PatchMesh): BadCell[] {
       const corner = mesh.corners[4 * p + k];
       const u = edgeTangent(mesh, mesh.patchEdges[4 * p + k], corner);
       const v = edgeTangent(mesh, mesh.patchEdges[4 * p + ((k + 3) % 4)], corner);
-      if (u[0] * v[1] - u[1] * v[0] > LEAST_SINE * Math.hypot(...u) * Math.hypot(...v)) continue;
+      if (isSound(...u, ...v)) continue;
       bad.push({
         r: mesh.r[corner],
         z: mesh.z[corner],
@@ -67,7 +74,7 @@ function badCells(grid: Grid): BadCell[] {
         const uz = grid.z[q] - grid.z[p];
         const vr = grid.r[o] - grid.r[p];
         const vz = grid.z[o] - grid.z[p];
-        if (ur * vz - uz * vr <= LEAST_SINE * Math.hypot(ur, uz) * Math.hypot(vr, vz)) sound = false;
+        if (!isSound(ur, uz, vr, vz)) sound = false;
       }
     }
     if (!sound) {

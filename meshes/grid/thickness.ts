@@ -238,7 +238,8 @@ function markMeetings(
   });
   const { r, z } = plane.nodes;
   pieces.forEach((a, index) => {
-    for (const b of pieces.slice(index + 1)) {
+    for (let next = index + 1; next < pieces.length; next++) {
+      const b = pieces[next];
       const neighbours = a.plan === b.plan && (a.i === b.j || a.j === b.i);
       if (neighbours || !crosses(a.p, a.q, b.p, b.q)) continue;
       hits[a.plan].add(a.i).add(a.j);
