@@ -70,7 +70,7 @@ export function predict({ design, scene }: Checked, hooks: Hooks = {}): Predicti
   report(0.97, "reading the field");
   const parts = finest.figures.map((p, i) => partResult(scene, finest, bars, p, i, power));
   const working = finest.loaded ?? finest.empty;
-  const surplus = helixSurplus(scene, finest.values.get("empty.R") ?? 0);
+  const surplus = helixSurplus(scene, read(finest, bars, "empty.R").value);
   const result: Result = {
     design,
     empty: figures.empty,
@@ -116,10 +116,13 @@ export function predict({ design, scene }: Checked, hooks: Hooks = {}): Predicti
   return { result, heat };
 }
 
-const read = (answer: Answer, bars: ReadonlyMap<string, number>, name: string): Uncertain => ({
-  value: answer.values.get(name) ?? 0,
-  plusMinus: bars.get(name) ?? 0,
-});
+/** A value of the finest grid with its bar; a name nobody put there is a defect, not a zero. */
+function read(answer: Answer, bars: ReadonlyMap<string, number>, name: string): Uncertain {
+  const value = answer.values.get(name);
+  const plusMinus = bars.get(name);
+  if (value === undefined || plusMinus === undefined) throw new RangeError(`no grid tells ${name}`);
+  return { value, plusMinus };
+}
 
 interface Solved {
   readonly finest: Answer;
@@ -131,6 +134,9 @@ interface Solved {
 }
 
 const ORDINALS = ["first", "second", "third", "fourth", "fifth", "sixth", "seventh", "eighth"];
+/** Where the grids start on the way from 0 to 1: most designs are done after the second. */
+const STARTS = [0.05, 0.2, 0.7, 0.85, 0.92];
+const ALL_SOLVED = 0.95;
 
 /** Grids of levels 1, 2, … until the governed bars hold. */
 function solveGrids(
@@ -144,7 +150,7 @@ function solveGrids(
   let worst = Number.POSITIVE_INFINITY;
   const solveAt = (level: number): Answer => {
     const name = `${ORDINALS[grids] ?? "next"} grid, ${unknownsAt(level)} unknowns${reached(worst, scene)}`;
-    const [from, to] = grids === 0 ? [0.05, 0.2] : [1 - 0.8 / grids, 0.95];
+    const [from, to] = [STARTS[grids] ?? ALL_SOLVED, STARTS[grids + 1] ?? ALL_SOLVED];
     return answerAt(scene, built, level, (f) => report(from + (to - from) * f, name));
   };
   const refined = refine(
