@@ -69,7 +69,25 @@ describe("conductor", () => {
       (d) => (d.coil.leads = { lengthMm: 100, spacingMm: 8 }),
       "/coil/leads/spacingMm",
       /8 mm/,
-      /above 8/,
+      /at least 8\.02/,
+    ],
+    [
+      "leads too near to resolve the gap",
+      (d) => (d.coil.leads = { lengthMm: 100, spacingMm: 8.001 }),
+      "/coil/leads/spacingMm",
+      /too fine/,
+      /at least 8\.02/,
+    ],
+    [
+      "rectangular leads that touch along their axial height, though not along their radial width",
+      (d) => {
+        d.coil.conductor = { ...d.coil.conductor, section: "rectTube", radialWidthMm: 6, axialHeightMm: 10 };
+        delete d.coil.conductor.outsideDiameterMm;
+        d.coil.leads = { lengthMm: 100, spacingMm: 9 };
+      },
+      "/coil/leads/spacingMm",
+      /touch: the conductor is 10 mm high/,
+      /at least 10\.0/,
     ],
   ]);
 

@@ -110,6 +110,16 @@ describe("sizes", () => {
   ]);
 });
 
+test("a key that every object of JavaScript has is as unknown as any other", () => {
+  for (const key of ["constructor", "toString", "valueOf", "hasOwnProperty"]) {
+    const [fault] = faultsOf((d) => {
+      d.coil.winding[key] = 1;
+    });
+    expect(fault?.pointer).toBe(`/coil/winding/${key}`);
+    expect(fault?.detail).toBe(`${key} is not a key known here`);
+  }
+});
+
 test("all faults are told at once, one entry each", () => {
   const faults = faultsOf((d) => {
     d.coil.conductor.wallMm = 5;

@@ -5,6 +5,7 @@
  */
 import * as z from "zod";
 import { materials } from "../solver/index.ts";
+import { leastSpacing } from "./leads.ts";
 import {
   ConductorMaterialSchema,
   checkTemperature,
@@ -200,6 +201,26 @@ function checkStrands(
   fault(context, ["strands"], detail, "every turn once");
 }
 
+/** Leads lie one above the other, so that a rectangular section counts by its axial height. */
+function checkLeads(
+  spacingMm: number,
+  c: z.infer<typeof ConductorSchema>,
+  context: z.core.$RefinementCtx,
+): void {
+  const [along, radial] =
+    "outsideDiameterMm" in c
+      ? [c.outsideDiameterMm, c.outsideDiameterMm]
+      : [c.axialHeightMm, c.radialWidthMm];
+  const least = leastSpacing({ along, across: Math.max(along, radial) });
+  if (spacingMm >= least) return;
+  const side = `the conductor is ${along} mm ${along === radial ? "wide" : "high, and the leads lie one above the other"}`;
+  const detail =
+    spacingMm > along
+      ? `leads ${spacingMm} mm apart, centre to centre, leave too fine a gap to resolve: ${side}`
+      : `leads ${spacingMm} mm apart, centre to centre, touch: ${side}`;
+  fault(context, ["leads", "spacingMm"], detail, `at least ${Number((least * 1.0005).toPrecision(4))}`);
+}
+
 const CoilSchema = z
   .strictObject({
     conductor: ConductorSchema,
@@ -213,12 +234,7 @@ const CoilSchema = z
   })
   .superRefine((coil, context) => {
     if (coil.strands !== undefined) checkStrands(coil.strands, turnCount(coil.winding), context);
-    if (coil.leads === undefined) return;
-    const c = coil.conductor;
-    const side = "outsideDiameterMm" in c ? c.outsideDiameterMm : Math.min(c.radialWidthMm, c.axialHeightMm);
-    if (coil.leads.spacingMm > side) return;
-    const detail = `leads ${coil.leads.spacingMm} mm apart, centre to centre, touch: the conductor is ${side} mm wide`;
-    fault(context, ["leads", "spacingMm"], detail, `above ${side}`);
+    if (coil.leads !== undefined) checkLeads(coil.leads.spacingMm, coil.conductor, context);
   });
 
 // Parts and guides

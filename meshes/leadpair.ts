@@ -1,14 +1,19 @@
 /**
  * A straight pair of leads, go and return side by side, as two rings of very large radius with opposed currents: the same
- * solution then holds the skin and proximity effect of any section. Bending a pair of spacing s to radius r costs (s/r)².
+ * solution then holds the skin and proximity effect of any section. Bending a pair of spacing s to radius r changes R and L per length by
+ * parts of the order (s/r)²: those of the order s/r change sign with the side it is bent to.
  */
-import { cutGrid, type GridAnswer, prepare, refine, solveState } from "../solver/index.ts";
+import { countNodes, cutGrid, type GridAnswer, MU0, prepare, refine, solveState } from "../solver/index.ts";
 import { build } from "./build.ts";
+import { FARTHEST } from "./leads.ts";
 import type { Scene } from "./scene.ts";
 
-/** Radius of the rings in spacings. */
+/** Radius of the rings in spacings and sections. */
 const RADIUS = 100;
-const LIMIT = 60_000;
+/** Bars of the pair against the accuracy asked of the coil: well below, so that the pair never keeps a coil from reaching it. */
+const SHARE = 0.3;
+/** No grid of the pair beyond the second is made larger than this. */
+const MOST_UNKNOWNS = 60_000;
 
 export interface LeadPair {
   /** Ω and H of go and return together; bars as half-widths. */
@@ -18,17 +23,19 @@ export interface LeadPair {
   readonly inductanceBar: number;
 }
 
-/** Resistance and inductance of the scene's leads at its frequency; zeros without leads. */
+/** Resistance and inductance of the scene's leads at its frequency, bars within its accuracy; zeros without leads. Rectangular ones lie one above the other. */
 export function leadPair(scene: Scene): LeadPair {
   const { leads, section } = scene;
   if (leads === null) return { resistance: 0, resistanceBar: 0, inductance: 0, inductanceBar: 0 };
   const across = section.kind === "round" ? 2 * section.radius : Math.max(section.width, section.height);
-  const r = RADIUS * (leads.spacing + across);
+  const spacing = Math.min(leads.spacing, FARTHEST * across);
+  const beyond = leads.length * (MU0 / Math.PI) * Math.log(leads.spacing / spacing);
+  const r = RADIUS * (spacing + across);
   const pair: Scene = {
     ...scene,
     turns: [
-      { r, z: -leads.spacing / 2 },
-      { r, z: leads.spacing / 2 },
+      { r, z: -spacing / 2 },
+      { r, z: spacing / 2 },
     ],
     circuit: { turns: 2, path: new Int32Array(2), sense: Int8Array.from([1, -1]) },
     advance: [
@@ -64,9 +71,9 @@ export function leadPair(scene: Scene): LeadPair {
   };
   const { finest, bars } = refine(
     solveAt,
-    () => LIMIT,
-    () => 0,
-    LIMIT,
+    (level) => countNodes(built.mesh, level),
+    (answer, found) => worstBar(answer, found) / (SHARE * scene.accuracy),
+    MOST_UNKNOWNS,
   );
   const scale = leads.length / (2 * Math.PI * r);
   const value = (name: string): number => scale * (finest.values.get(name) ?? 0);
@@ -74,7 +81,13 @@ export function leadPair(scene: Scene): LeadPair {
   return {
     resistance: value("R"),
     resistanceBar: bar("R"),
-    inductance: value("X") / omega,
+    inductance: value("X") / omega + beyond,
     inductanceBar: bar("X") / omega,
   };
+}
+
+/** Largest relative bar. */
+function worstBar(answer: GridAnswer, bars: ReadonlyMap<string, number>): number {
+  const parts = [...answer.values].map(([name, value]) => (bars.get(name) ?? 0) / Math.abs(value));
+  return Math.max(...parts);
 }

@@ -4,6 +4,7 @@ import { build } from "./build.ts";
 import { checkDesign } from "./check.ts";
 import { scaleScene } from "./fixtures.ts";
 import { leadPair } from "./leadpair.ts";
+import { leastSpacing } from "./leads.ts";
 import { Cancelled, predict } from "./predict.ts";
 import type { Scene } from "./scene.ts";
 
@@ -167,6 +168,25 @@ describe("leads", () => {
     const pair = leadPair(leadScene(1, 0.05, 0.004));
     near(pair.resistance, (2 * 1.75e-8) / (Math.PI * 0.002 ** 2), 1e-3);
     near(pair.inductance, 4e-7 * (Math.log(0.05 / 0.002) + 0.25), 1e-3);
+  });
+
+  it("thin wire very far apart: the same closed form holds where no grid spans wire and spacing", () => {
+    const pair = leadPair(leadScene(1, 20, 1e-5));
+    near(pair.resistance, (2 * 1.75e-8) / (Math.PI * 5e-6 ** 2), 1e-3);
+    near(pair.inductance, 4e-7 * (Math.log(20 / 5e-6) + 0.25), 1e-3);
+  });
+
+  it("as near as the design may put them: a grid is found, and the gap's crowding shows", () => {
+    const least = 1.0005 * leastSpacing({ along: 0.008, across: 0.008 });
+    const wide = leadPair(leadScene(1e4, 0.1, 0.008));
+    for (const wall of [0, 0.001]) {
+      const pair = leadPair({
+        ...leadScene(1e4, least, 0.008),
+        section: { kind: "round", radius: 0.004, wall },
+      });
+      expect(pair.resistance).toBeGreaterThan(1.5 * wide.resistance);
+      expect(pair.inductance).toBeLessThan(0.2 * wide.inductance);
+    }
   });
 
   it("close together in the skin limit: (μ0/π) acosh(s/2a) outside, crowded towards each other", () => {

@@ -107,13 +107,13 @@ function libraryWords(path: Path, value: unknown, ids: readonly unknown[]): [str
 }
 
 /** Keys that are known elsewhere, with the reason why not here. */
-const elsewhere: Readonly<Record<string, string>> = {
-  lossTangent: "lossTangent is for guides only; what conducts has its losses by resistivityOhmM",
-  heated: "heated is for parts only; a guide's heat is never wanted",
-  strands: "strands belong to the coil, beside conductor and winding",
-  leads: "leads belong to the coil, beside conductor and winding",
-  wallMm: "a bar is solid and has no wall; roundTube and rectTube have one",
-};
+const elsewhere: ReadonlyMap<string, string> = new Map([
+  ["lossTangent", "lossTangent is for guides only; what conducts has its losses by resistivityOhmM"],
+  ["heated", "heated is for parts only; a guide's heat is never wanted"],
+  ["strands", "strands belong to the coil, beside conductor and winding"],
+  ["leads", "leads belong to the coil, beside conductor and winding"],
+  ["wallMm", "a bar is solid and has no wall; roundTube and rectTube have one"],
+]);
 
 /** Hints are looked for as long as the faults are listed at all. */
 function unknownKeys(path: Path, keys: readonly string[], known: readonly string[]): Fault[] {
@@ -122,7 +122,7 @@ function unknownKeys(path: Path, keys: readonly string[], known: readonly string
 
 function unknownKey(path: Path, key: string, known: readonly string[]): Fault {
   const near = nearest(key, known);
-  const why = near !== undefined ? `did you mean ${near}?` : elsewhere[key];
+  const why = near !== undefined ? `did you mean ${near}?` : elsewhere.get(key);
   const name = key.length > 40 ? `${key.slice(0, 40)}…` : key;
   return make(
     path,
