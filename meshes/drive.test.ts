@@ -80,9 +80,12 @@ describe("the coil at work", () => {
   });
 });
 
+type Four = [number, number, number, number];
+
 /** All ends of the four bars. */
-function corners(): number[][] {
-  return Array.from({ length: 16 }, (_, k) => [1, 2, 4, 8].map((bit) => ((k & bit) === 0 ? -1 : 1)));
+function corners(): Four[] {
+  const end = (k: number, bit: number): number => ((k & bit) === 0 ? -1 : 1);
+  return Array.from({ length: 16 }, (_, k): Four => [end(k, 1), end(k, 2), end(k, 4), end(k, 8)]);
 }
 
 describe("terminals", () => {

@@ -5,7 +5,7 @@
 /** The edge of a body in the half-section. */
 export interface Outline {
   readonly role: "copper" | "part" | "guide";
-  /** The body's name; for copper "turn 1", "turn 2", …. */
+  /** The body's name; for copper "turn 0", "turn 1", … as documents count them. */
   readonly name: string;
   /** Closed curve as [r, z] corners, m, without repeating the first; curved edges as many short ones. A bore is an outline of its own. */
   readonly points: readonly (readonly [number, number])[];
