@@ -1,6 +1,16 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { evenly, figure, percent, plain, plainFigure, prefixed, show } from "./figures.ts";
+import {
+  decimalsFor,
+  evenly,
+  figure,
+  homelyUnit,
+  percent,
+  plain,
+  plainFigure,
+  prefixed,
+  show,
+} from "./figures.ts";
 
 const q = (value: number, plusMinus: number) => ({ value, plusMinus });
 
@@ -32,6 +42,24 @@ describe("figures for people", () => {
     expect(plain(100, 2)).toBe("100");
     expect(plainFigure(10000, "Hz")).toBe("10 kHz");
     expect(evenly([73.084, 56.503, 5.1])).toEqual(["73.08", "56.50", "5.10"]);
+  });
+
+  it("keep a unit people know while it reads at sight, and prefix it beyond", () => {
+    const perArea = { factor: 1e4, symbol: "W/cm²" };
+    expect(homelyUnit(perArea, [48e4])).toBe(perArea);
+    expect(homelyUnit(perArea, [0])).toBe(perArea);
+    expect(figure(q(1.1155, 6e-4), homelyUnit(perArea, [1.1155]))).toBe("111.55 ± 0.06 µW/cm²");
+    expect(figure(q(5.0408e14, 2e11), homelyUnit(perArea, [5.0408e14]))).toBe("50.408 ± 0.020 GW/cm²");
+  });
+
+  it("give places of tiny and of huge things the same digits", () => {
+    expect(
+      [
+        [14, -0.69],
+        [0.0227, 0],
+        [2271.9, 3],
+      ].map((at) => decimalsFor(at, 4)),
+    ).toEqual([2, 5, 0]);
   });
 
   it("write shares", () => {

@@ -2,6 +2,7 @@
 import type { Uncertain } from "../../meshes/result.ts";
 
 const prefixes: readonly (readonly [factor: number, symbol: string])[] = [
+  [1e12, "T"],
   [1e9, "G"],
   [1e6, "M"],
   [1e3, "k"],
@@ -10,6 +11,7 @@ const prefixes: readonly (readonly [factor: number, symbol: string])[] = [
   [1e-6, "µ"],
   [1e-9, "n"],
   [1e-12, "p"],
+  [1e-15, "f"],
 ];
 
 /** A unit to write numbers in: the number is divided by `factor` and followed by `symbol`. */
@@ -24,6 +26,17 @@ export function prefixed(symbol: string, values: readonly number[]): Unit {
   if (largest === 0 || !Number.isFinite(largest)) return { factor: 1, symbol };
   const [factor, prefix] = prefixes.find(([f]) => largest >= 0.9995 * f) ?? prefixes.at(-1)!;
   return { factor, symbol: prefix + symbol };
+}
+
+/** Numbers that need no prefix yet, in a unit that is better left as it is known. */
+const homely = { from: 1e-3, to: 1e6 };
+
+/** `unit` as it is while the largest of `values` makes a number people read at sight, prefixed beyond. */
+export function homelyUnit(unit: Unit, values: readonly number[]): Unit {
+  const largest = Math.max(0, ...values.map((value) => Math.abs(value) / unit.factor));
+  if (largest === 0 || (largest >= homely.from && largest < homely.to)) return unit;
+  const { factor, symbol } = prefixed(unit.symbol, [largest]);
+  return { factor: factor * unit.factor, symbol };
 }
 
 /** More digits than this are never shown, however small the bar. */
@@ -73,6 +86,12 @@ export function plain(value: number, digits = 4): string {
   const place = Math.floor(Math.log10(Math.abs(value))) - digits + 1;
   const text = atPlace(value, place);
   return text.includes(".") ? text.replace(/\.?0+$/, "") : text;
+}
+
+/** The decimals with which the largest of `values` has so many significant digits. */
+export function decimalsFor(values: readonly number[], digits: number): number {
+  const largest = Math.max(0, ...values.map(Math.abs));
+  return largest === 0 ? 0 : Math.max(0, digits - 1 - Math.floor(Math.log10(largest)));
 }
 
 /** Numbers of one column without bars: as many decimals for all as the largest needs for so many significant digits. */

@@ -2,13 +2,13 @@
 
 export const lineWidth = 80;
 
-/** Breaks words into lines of at most 80 columns; every line after the first starts with `hang`. */
-export function wrap(text: string, first = "", hang = first): string[] {
+/** Breaks words into lines of at most `width` columns; every line after the first starts with `hang`. */
+export function wrap(text: string, first = "", hang = first, width = lineWidth): string[] {
   const lines: string[] = [];
   let line = first;
   let empty = true;
   for (const word of text.split(/\s+/).filter((w) => w !== "")) {
-    if (!empty && line.length + 1 + word.length > lineWidth) {
+    if (!empty && line.length + 1 + word.length > width) {
       lines.push(line);
       line = hang;
       empty = true;

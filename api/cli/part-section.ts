@@ -1,6 +1,6 @@
 /** One part's lines in the people's table: its power, its surface, and where its heat sits. */
 import type { DepthShare, PartResult } from "../../meshes/result.ts";
-import { figure, percent, plain } from "./figures.ts";
+import { decimalsFor, figure, homelyUnit, percent, plain } from "./figures.ts";
 import { columns, wrap } from "./layout.ts";
 
 /** Lines of one part, two blanks in. */
@@ -12,21 +12,25 @@ export function partSection(part: PartResult): string[] {
 function keyFigures(part: PartResult): string[] {
   const rows = [
     ["power", figure(part.powerW, "W")],
-    ["over its whole surface", figure(part.surfaceWPerM2, perArea)],
+    ["over its whole surface", figure(part.surfaceWPerM2, homelyUnit(perArea, [part.surfaceWPerM2.value]))],
     ["surface field H", figure(part.surfaceHAPerM, "A/m")],
-    ["hottest spot", `${figure(part.peakWPerM3, perVolume)}${spot(part.hotSpotMm)}`],
+    [
+      "hottest spot",
+      `${figure(part.peakWPerM3, homelyUnit(perVolume, [part.peakWPerM3.value]))}${spot(part.hotSpotMm)}`,
+    ],
   ];
   if (part.skinDepthMm !== null) rows.push(["skin depth", `${plain(part.skinDepthMm, 3)} mm`]);
   return columns(rows, ["left", "left"]);
 }
 
-/** Powers per area and volume are told as heat treaters note them, never in prefixes. */
+/** Powers per area and volume are told as heat treaters note them, prefixes only where those do not reach. */
 const perArea = { factor: 1e4, symbol: "W/cm²" };
 const perVolume = { factor: 1e6, symbol: "W/cm³" };
 
 function spot(at: readonly number[] | null): string {
   if (at === null) return "";
-  const [r, z] = at.map((mm) => String(Number(mm.toFixed(2))));
+  const decimals = decimalsFor(at, 4);
+  const [r, z] = at.map((mm) => String(Number(mm.toFixed(decimals))));
   return ` at r ${r}, z ${z} mm`;
 }
 

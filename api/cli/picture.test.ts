@@ -145,6 +145,19 @@ describe("the heat picture", () => {
     expect(svg).not.toContain("NaN");
   });
 
+  it("breaks long words above the drawing into lines, and lowers the drawing by as much", () => {
+    const heightOf = (svg: string): number => Number(/ height="(\d+)"/.exec(svg)![1]);
+    const long = { ...caption, title: "anvil ".repeat(33), lines: ["x".repeat(300)] };
+    const svg = renderPicture(map, long);
+    const shown = [...svg.matchAll(/<text x="40"[^>]*>([^<]*)</g)].map((found) => found[1]!);
+    expect(Math.max(...shown.map((line) => line.length))).toBeLessThanOrEqual(120);
+    expect(shown.join("").match(/anvil/g)).toHaveLength(33);
+    expect(shown.join("").match(/x/g)!.length).toBeGreaterThanOrEqual(300);
+    expect(heightOf(svg)).toBeGreaterThan(
+      heightOf(renderPicture(map, { ...caption, title: "anvil", lines: ["x"] })) + 90,
+    );
+  });
+
   it("stays small: 40 000 cells in under a megabyte", () => {
     const large = block(200, 0.03, (r, z) => 1e9 * Math.exp((r - 0.03) / 1e-3) * (1 + Math.sin(900 * z) / 2));
     expect(renderPicture(large, caption).length).toBeLessThan(1e6);

@@ -4,9 +4,10 @@
  */
 import type { HeatMap, Outline } from "../../meshes/heatmap.ts";
 import { heatColour } from "./colour.ts";
-import { plain } from "./figures.ts";
+import { homelyUnit, plain } from "./figures.ts";
 import { powerPerLength } from "./heat-profile.ts";
 import { type HeatScale, marks, position, roundStep, scaleFor } from "./heat-scale.ts";
+import { wrap } from "./layout.ts";
 import { joinCells } from "./patches-of-colour.ts";
 
 /** The words of a picture. */
@@ -24,7 +25,17 @@ const faint = "#8a8378";
 /** Bodies that take no heat. */
 const cold = "#dcd8ce";
 /** Width of the picture and the box the drawing fits in, px. */
-const page = { width: 1080, left: 84, boxWidth: 640, boxHeight: 620, top: 64, lineHeight: 21 };
+const page = {
+  width: 1080,
+  left: 84,
+  boxWidth: 640,
+  boxHeight: 620,
+  top: 64,
+  lineHeight: 21,
+  titleHeight: 28,
+  titleChars: 70,
+  lineChars: 120,
+};
 /** Drawing steps a pixel: positions are whole steps. */
 const fine = 10;
 /** Height of the colour bar, px. */
@@ -65,7 +76,10 @@ function frameOf(outlines: readonly Outline[]): Frame {
 export function renderPicture(heat: HeatMap, caption: Caption): string {
   const frame = frameOf(heat.outlines);
   const scale = scaleFor(heat);
-  const top = page.top + page.lineHeight * caption.lines.length + 38;
+  const titles = broken(caption.title, page.titleChars);
+  const lines = caption.lines.flatMap((line) => broken(line, page.lineChars));
+  const head = page.top + page.titleHeight * (titles.length - 1);
+  const top = head + page.lineHeight * lines.length + 38;
   const height = (frame.zMax - frame.zMin) * frame.scale;
   const notes = notesFor(scale, caption, frame);
   const foot = top + Math.max(height + (isFlat(frame) ? flatRoom + 34 : 78), legendLength + 40);
@@ -77,8 +91,10 @@ export function renderPicture(heat: HeatMap, caption: Caption): string {
     `<title>${xml(caption.title)}: where the heat sits</title>`,
     `<defs><pattern id="guide" width="6" height="6" patternUnits="userSpaceOnUse" patternTransform="rotate(45) scale(${fine})"><rect width="6" height="6" fill="#e4e0d6"/><path d="M0 0v6" stroke="${faint}" stroke-width="1.6"/></pattern></defs>`,
     `<rect width="100%" height="100%" fill="${paper}"/>`,
-    `<text x="40" y="44" font-size="22" font-weight="600">${xml(caption.title)}</text>`,
-    ...caption.lines.map((line, k) => label(40, page.top + 8 + page.lineHeight * k, line)),
+    ...titles.map((line, k) =>
+      label(40, 44 + page.titleHeight * k, line, 'font-size="22" font-weight="600"'),
+    ),
+    ...lines.map((line, k) => label(40, head + 8 + page.lineHeight * k, line)),
     `<g transform="translate(${num(axisX)} ${num(middle)})">`,
     `<g id="half">${bodies(heat, frame)}${colours(heat, scale, frame)}${edges(heat.outlines, frame)}</g>`,
     `<use href="#half" transform="scale(-1 1)"/>`,
@@ -92,6 +108,11 @@ export function renderPicture(heat: HeatMap, caption: Caption): string {
     .filter((line) => line !== "")
     .join("\n")
     .concat("\n");
+}
+
+/** A text in lines that fit the page; a word longer than a line is cut. */
+function broken(text: string, width: number): string[] {
+  return wrap(text.replace(new RegExp(`\\S{${width}}`, "gu"), "$& "), "", "", width);
 }
 
 function notesFor(scale: HeatScale | null, { skinDepth }: Caption, { scale: px }: Frame): string[] {
@@ -243,9 +264,10 @@ function profile(heat: HeatMap, frame: Frame): string {
   if (largest === 0) return "";
   const ends = Array.from({ length: count + 1 }, (_, k) => (from + (k / count) * (to - from)) * scale);
   const lengths = Array.from(power, (value) => (profileLength * value) / largest);
+  const perLength = homelyUnit({ factor: 1e2, symbol: "W/cm" }, [largest]);
   const words = [
     `parts' heat per ${flat ? "radius" : "height"}`,
-    `at most ${plain(largest * 1e-2, 3)} W/cm`,
+    `at most ${plain(largest / perLength.factor, 3)} ${perLength.symbol}`,
   ] as const;
   return flat ? belowDrawing(ends, lengths, words, -zMin * scale) : besideDrawing(ends, lengths, words);
 }
@@ -294,6 +316,7 @@ function legend(scale: HeatScale, top: number): string {
   const x = page.left + page.boxWidth + 176;
   const first = top;
   const slice = legendLength / shades;
+  const unit = homelyUnit({ factor: 1e6, symbol: "W/cm³" }, [scale.high]);
   const bars = Array.from({ length: shades }, (_, k) => {
     const y = first + legendLength - (k + 1) * slice;
     return `<rect x="${x}" y="${num(y)}" width="22" height="${num(k === 0 ? slice : slice + 1)}" fill="${heatColour((k + 0.5) / shades)}"/>`;
@@ -302,11 +325,11 @@ function legend(scale: HeatScale, top: number): string {
     const y = first + legendLength * (1 - position(scale, density));
     return (
       `<path d="M${x + 22} ${num(y)}h5" stroke="${faint}"/>` +
-      label(x + 32, y + 4, plain(density * 1e-6, 3), 'font-size="12"')
+      label(x + 32, y + 4, plain(density / unit.factor, 3), 'font-size="12"')
     );
   });
   return [
-    label(x, top - 24, "power density, W/cm³", 'font-size="12"'),
+    label(x, top - 24, `power density, ${unit.symbol}`, 'font-size="12"'),
     label(x, top - 8, scale.kind === "log" ? "logarithmic" : "linear", `font-size="12" fill="${faint}"`),
     ...bars,
     ...ticks,

@@ -95,6 +95,42 @@ describe("the people's table", () => {
     }
   });
 
+  it("keeps to 80 columns with names of 200 characters, and names what has no name", () => {
+    const long = "a flange forged from the offcuts of two older ones ".repeat(4).trim();
+    const named = (name: string): string =>
+      text({
+        ...result,
+        design: { ...result.design, name },
+        parts: result.parts.map((part) => ({ ...part, name })),
+      });
+    for (const line of named(long).split("\n")) expect(line.length).toBeLessThanOrEqual(lineWidth);
+    expect(named(long).replace(/\s+/g, " ")).toContain(`PART: ${long}`);
+    expect(named("")).toMatch(/^unnamed design\n/);
+    expect(named("")).toContain("\nPART: part\n");
+  });
+
+  it("keeps to 80 columns for instrument currents and for giant ones", () => {
+    for (const k of [1e-10, 1e10]) {
+      const times = (u: { value: number; plusMinus: number }) => ({
+        value: k * u.value,
+        plusMinus: k * u.plusMinus,
+      });
+      const odd = text({
+        ...result,
+        turns: result.turns.map((turn) => ({ ...turn, powerW: k * turn.powerW })),
+        parts: result.parts.map((part) => ({
+          ...part,
+          powerW: times(part.powerW),
+          surfaceWPerM2: times(part.surfaceWPerM2),
+          peakWPerM3: times(part.peakWPerM3),
+        })),
+      });
+      for (const line of odd.split("\n")) expect(line.length).toBeLessThanOrEqual(lineWidth);
+      expect(odd).toMatch(k < 1 ? /power in the copper of each, nW/ : /power in the copper of each, [GT]W/);
+      expect(odd).toMatch(k < 1 ? /[nµ]W\/cm²/ : /[GT]W\/cm²/);
+    }
+  });
+
   it("sets empty beside loaded in one unit, decimal points under each other", () => {
     const lines = text(result).split("\n");
     const row = lines.find((line) => line.includes("resistance R"))!;

@@ -1,7 +1,17 @@
 /** The result document as a table for people: aligned, with units and bars, 80 columns wide. Pure: result in, text out. */
 import { styleText } from "node:util";
 import type { Power, Result, Terminal, Uncertain } from "../../meshes/result.ts";
-import { evenly, figure, percent, plain, plainFigure, prefixed, show, type Unit } from "./figures.ts";
+import {
+  evenly,
+  figure,
+  homelyUnit,
+  percent,
+  plain,
+  plainFigure,
+  prefixed,
+  show,
+  type Unit,
+} from "./figures.ts";
 import { type Alignment, columns, wrap } from "./layout.ts";
 import { partSection } from "./part-section.ts";
 import { coilSentence, driveSentence, printable } from "./sentence.ts";
@@ -18,17 +28,22 @@ export function renderTable(result: Result, { colour }: Dress): string {
     colour ? styleText(look, text, { validateStream: false }) : text;
   const title = (text: string): string => dress("bold", text);
   const quiet = (text: string): string => dress("dim", text);
-  const section = (heading: string, lines: readonly string[]): string[] =>
-    lines.length === 0 ? [] : ["", title(heading), ...lines];
+  const heading = (words: string): string[] => wrap(printable(words)).map(title);
+  const section = (words: string, lines: readonly string[]): string[] =>
+    lines.length === 0 ? [] : ["", ...heading(words), ...lines];
+  const watts = homelyUnit(
+    { factor: 1, symbol: "W" },
+    result.turns.map((turn) => turn.powerW),
+  );
   const lines = [
-    title(printable(result.design.name)),
+    ...heading(result.design.name || "unnamed design"),
     ...wrap(`${coilSentence(result.design.coil)}; driven with ${driveSentence(result.design.drive)}.`),
     ...section("AT THE COIL'S TERMINALS", terminalLines(result.empty, result.loaded)),
     ...section("POWER AND SUPPLY", powerLines(result.power)),
-    ...result.parts.flatMap((part) => section(`PART: ${printable(part.name)}`, partSection(part))),
+    ...result.parts.flatMap((part) => section(`PART: ${part.name || "part"}`, partSection(part))),
     ...section(
-      "TURNS (counted from 0, in the winding's order; power in the copper of each, W)",
-      turnLines(result),
+      `TURNS (counted from 0, in the winding's order; power in the copper of each, ${watts.symbol})`,
+      turnLines(result, watts),
     ),
     ...section("STRAY FIELD (rms)", strayLines(result)),
     ...section("COPPER AND LEADS", copperLines(result)),
@@ -127,13 +142,13 @@ function powerLines(power: Power): string[] {
 }
 
 /** A line a turn up to a dozen turns; beyond, ten powers a line. */
-function turnLines({ turns }: Result): string[] {
-  const powers = evenly(turns.map((turn) => turn.powerW));
+function turnLines({ turns }: Result, watts: Unit): string[] {
+  const powers = evenly(turns.map((turn) => turn.powerW / watts.factor));
   if (turns.length <= 12) {
     const r = evenly(turns.map((turn) => turn.rMm));
     const z = evenly(turns.map((turn) => turn.zMm));
     const rows = turns.map((_, k) => [String(k), r[k]!, z[k]!, powers[k]!]);
-    return columns(rows, ["right", "right", "right", "right"], ["turn", "r mm", "z mm", "W"]);
+    return columns(rows, ["right", "right", "right", "right"], ["turn", "r mm", "z mm", watts.symbol]);
   }
   const lines: string[][] = [];
   for (let k = 0; k < turns.length; k += 8) {
