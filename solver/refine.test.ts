@@ -87,6 +87,17 @@ describe("refinement", () => {
     expect(error(found.finest, 10)).toBeLessThanOrEqual(found.bars.get("q") ?? 0);
   });
 
+  it("takes the largest grid below the limit where the one it would like is above", () => {
+    // From level 2 it would go to 4, 1600 unknowns; level 3 has 900.
+    expect(refine(solveAt, (n) => 100 * n * n, excess(1e-9), 1000).finest.level).toBe(3);
+  });
+
+  it("raises the level by the third root of what the bars must shrink by", () => {
+    expect(nextLevel(4, 2)).toBe(Math.ceil(4 * 2 ** (1 / 3)));
+    expect(nextLevel(4, 1.5)).toBe(5);
+    expect(nextLevel(4, 8)).toBe(8);
+  });
+
   it("is content with two grids where they suffice", () => {
     expect(refine(solveAt, (n) => 100 * n * n, excess(10), 1e6).grids).toBe(2);
   });

@@ -37,6 +37,19 @@ describe("fields summed over ring sources", () => {
     }
   });
 
+  it("agree also where a magnetic part lags", () => {
+    const materials = coilMaterials().map((m) =>
+      m.reluctivity.re === 1 ? m : { ...m, reluctivity: { re: m.reluctivity.re, im: 0.3 } },
+    );
+    expect(materials.some((m) => m.reluctivity.im > 0)).toBe(true);
+    const lagging = solveState(ready, { materials, omega: 2 * Math.PI * 3000 }, circuit([1, 1, 1]));
+    const sum = fieldOfRings(ringSources(lagging), 0.9 * radius, 0.9 * radius);
+    const poles = makeProbe(lagging)(0.9 * radius, 0.9 * radius);
+    for (const k of ["br", "bz"] as const)
+      for (const part of ["re", "im"] as const)
+        expect(Math.abs((sum?.[k][part] ?? 9) - poles[k][part])).toBeLessThan(1e-3 * size(poles));
+  });
+
   it("far away are those of the moment: (μ0/4π) 2m/d³ on the axis", () => {
     // A dipole's field falls with the cube of the distance (Jackson, Classical Electrodynamics, 5.56).
     const [d, k] = [100 * radius, 3];

@@ -18,23 +18,24 @@ function halfDisc(R: number, centre: number) {
   );
 }
 
-/** A quarter ring between radii 1 and 2 about (3, 0), two patches. */
-function quarterRing() {
+/** A ring between radii 1 and 2 about (3, 0), eight patches: angles pass ±π. */
+function ring() {
   const at = (radius: number, k: number): [number, number] => {
     const angle = (k * Math.PI) / 4;
     return [3 + radius * Math.cos(angle), radius * Math.sin(angle)];
   };
-  const points = [0, 1, 2].flatMap((k) => [at(1, k), at(2, k)]);
-  const arcs = [0, 1].flatMap((k) =>
+  const eighths = Array.from({ length: 8 }, (_, k) => k);
+  const points = eighths.flatMap((k) => [at(1, k), at(2, k)]);
+  const arcs = eighths.flatMap((k) =>
     [1, 2].map(
-      (radius, i): ArcOfEdge => ({ a: 2 * k + i, b: 2 * k + 2 + i, centreR: 3, centreZ: 0, radius }),
+      (radius, i): ArcOfEdge => ({ a: 2 * k + i, b: (2 * k + 2 + i) % 16, centreR: 3, centreZ: 0, radius }),
     ),
   );
   return makePatchMesh(
     Float64Array.from(points, (p) => p[0]),
     Float64Array.from(points, (p) => p[1]),
-    Int32Array.from([0, 1, 3, 2, 2, 3, 5, 4]),
-    Int32Array.from([1, 2]),
+    Int32Array.from(eighths.flatMap((k) => [0, 1, 3, 2].map((c) => (2 * k + c) % 16))),
+    Int32Array.from(eighths),
     arcs,
     null,
   );
@@ -42,7 +43,7 @@ function quarterRing() {
 
 describe("a ring cut into cells", () => {
   it.each([1, 2, 5])("level %d has every node on its circle, at equal angles", (n) => {
-    const grid = cutGrid(quarterRing(), n);
+    const grid = cutGrid(ring(), n);
     // Concentric arcs and straight rays: the Coons map is polar, radii and angles in equal steps.
     for (let i = 0; i < grid.r.length; i++) {
       const radius = Math.hypot((grid.r[i] ?? 0) - 3, grid.z[i] ?? 0);
@@ -54,12 +55,12 @@ describe("a ring cut into cells", () => {
   });
 
   it.each([1, 2, 5])("level %d: counted nodes, each in a cell, patches and regions kept", (n) => {
-    const mesh = quarterRing();
+    const mesh = ring();
     const grid = cutGrid(mesh, n);
     expect(grid.r.length).toBe(countNodes(mesh, n));
-    expect(grid.r.length).toBe((2 * n + 1) * (4 * n + 1));
+    expect(grid.r.length).toBe((2 * n + 1) * 16 * n);
     expect(new Set(grid.cellNodes).size).toBe(grid.r.length);
-    expect(grid.cellRegion.length).toBe(2 * n * n);
+    expect(grid.cellRegion.length).toBe(8 * n * n);
     grid.cellPatch.forEach((p, c) => {
       expect(grid.cellRegion[c]).toBe(mesh.region[p]);
     });
@@ -67,7 +68,7 @@ describe("a ring cut into cells", () => {
 
   it("neighbours share the nodes of their common edge: a coarse grid's are every second of the fine one's", () => {
     const key = (r = 0, z = 0): string => `${r.toFixed(9)},${z.toFixed(9)}`;
-    const [coarse, fine] = [cutGrid(quarterRing(), 2), cutGrid(quarterRing(), 4)];
+    const [coarse, fine] = [cutGrid(ring(), 2), cutGrid(ring(), 4)];
     const there = new Set(Array.from(fine.r, (r, i) => key(r, fine.z[i])));
     expect(there.size).toBe(fine.r.length);
     coarse.r.forEach((r, i) => {
@@ -102,6 +103,18 @@ describe("open space round a half disc", () => {
       expect(c?.[2]).toBeGreaterThan(c?.[0] ?? 2);
       expect(t?.[6]).toBeLessThan(t?.[0] ?? 0);
     }
+  });
+
+  it("edges that run the other way round, as in a mesh turned upside down, give the same space", () => {
+    const edgeEnds = mesh.edgeEnds.slice();
+    for (const e of mesh.outerEdges) edgeEnds.subarray(2 * e, 2 * e + 2).reverse();
+    const [plain, turned] = [cutGrid(mesh, 2), cutGrid({ ...mesh, edgeEnds }, 2)];
+    expect(turned.exterior?.c).toEqual(plain.exterior?.c);
+    turned.exterior?.cellNodes.forEach((node, k) => {
+      const other = plain.exterior?.cellNodes[k] ?? -1;
+      expect(turned.r[node]).toBeCloseTo(plain.r[other] ?? -1, 12);
+      expect(turned.z[node]).toBeCloseTo(plain.z[other] ?? -9, 12);
+    });
   });
 
   it("the axis is fixed, all else inside is free", () => {
