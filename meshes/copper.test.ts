@@ -36,7 +36,7 @@ describe("a coil by itself", () => {
       (d) => (d.coil.winding.pitchMm = 8.00001),
       "/coil/winding/pitchMm",
       /too fine/,
-      /above 8/,
+      /^at least 8\.001$/,
     ],
     [
       "helix of rectangles, by their height",
@@ -180,4 +180,11 @@ describe("a coil by itself", () => {
   ])("%s is accepted", (_name, change) => {
     expect(faultsOf(change)).toEqual([]);
   });
+});
+
+test("the pitch offered where a gap is too fine is accepted", () => {
+  const pitch = (mm: number) => faultsOf((d) => (d.coil.winding.pitchMm = mm));
+  const offered = Number(/[\d.]+$/.exec(pitch(8.00001)[0]?.accepted ?? "")?.[0]);
+  expect(offered).toBeGreaterThan(8);
+  expect(pitch(offered)).toEqual([]);
 });

@@ -106,8 +106,15 @@ function pitchFaults(
     if (p - side >= scale.finest) return [];
     const pointer = typeof pitch === "number" ? pointerTo(WINDING, key) : pointerTo(WINDING, key, i);
     const name = key === "layerPitchMm" ? "layers" : "turns";
-    return [{ pointer, detail: closeWords(p, side, direction, name), accepted: `above ${side}` }];
+    const accepted = p > side ? `at least ${atLeast(side + 1.01 * scale.finest)}` : `above ${side}`;
+    return [{ pointer, detail: closeWords(p, side, direction, name), accepted }];
   });
+}
+
+/** Rounded up to five digits: what is shown is accepted, though the whole grows by it (hence 1.01 before). */
+function atLeast(mm: number): string {
+  const unit = 10 ** (Math.floor(Math.log10(mm)) - 4);
+  return String(Number((Math.ceil(mm / unit) * unit).toPrecision(5)));
 }
 
 function closeWords(pitch: number, side: number, direction: string, name: string): string {
