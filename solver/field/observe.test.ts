@@ -75,6 +75,17 @@ describe("heat of a rod in a slow uniform field", () => {
     expect(quantileDensity(s, [1], 0.5).density / (0.5 * peak)).toBeCloseTo(1, 2);
   });
 
+  it("knows the densities beside a quantile: p/peak is the share of volume below p", () => {
+    const peak = (SLOW ** 2 * B ** 2 * A ** 2) / (4 * 1e-5);
+    const { density, beside } = quantileDensity(s, [1], 0.9);
+    for (const [got, share] of [
+      [beside[0], 0.95],
+      [density, 0.9],
+      [beside[1], 0.85],
+    ] as const)
+      expect(Math.abs(got / (share * peak) - 1)).toBeLessThan(2e-3);
+  });
+
   it("refuses a part that is not there", () => {
     expect(() => quantileDensity(s, [7])).toThrow(/no cell in regions 7/);
   });

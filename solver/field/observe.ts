@@ -147,6 +147,8 @@ export interface HotSpot {
   /** m. */
   readonly r: number;
   readonly z: number;
+  /** Densities exceeded in half and in one and a half times the volume, W/m³: their change with the grid tells whether that of `density` is chance. */
+  readonly beside: readonly [number, number];
 }
 
 /** Pieces: the place of the hottest corner, and the densities between which each lies. */
@@ -174,7 +176,8 @@ export function quantileDensity(solution: Solution, regions: readonly number[], 
   const fine = piecesOf(solution, hottest, PIECES);
   const density = upperQuantile(fine, tail);
   const at = placeOf(fine, density);
-  return { density, r: fine.r[at], z: fine.z[at] };
+  const beside = [upperQuantile(fine, tail / 2), upperQuantile(fine, 1.5 * tail)] as const;
+  return { density, r: fine.r[at], z: fine.z[at], beside };
 }
 
 function piecesOf(solution: Solution, cells: readonly number[], m: number): Pieces {

@@ -68,6 +68,9 @@ describe("an infinite rod along a uniform field", () => {
     const s = solveApplied(rod(1), { materials: [AIR, part(1e-6, 40)], omega: omegaOf(5, 40) }, B);
     const surface = surfaceField(s, [1]);
     expect(Math.abs(surface.rms / (B / MU0) - 1)).toBeLessThan(1e-12);
+    // The applied field is in phase with itself: all of it is owed to the real part.
+    expect(Math.abs(surface.shares[0] / surface.rms - 1)).toBeLessThan(1e-12);
+    expect(surface.shares[1] / surface.rms).toBeLessThan(1e-12);
     expect(Math.abs(surface.area / (2 * Math.PI * 0.01 * 0.003) - 1)).toBeLessThan(1e-13);
   });
 });

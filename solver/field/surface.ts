@@ -20,6 +20,8 @@ import { reluctivityOf } from "./system.ts";
 export interface SurfaceField {
   /** Tangential H, rms in time and over the surface's area, A/m. */
   readonly rms: number;
+  /** What of `rms` is owed to the part in phase with the current and to that across it; their sum is `rms`. */
+  readonly shares: readonly [number, number];
   /** Area of revolution of the surface, m². */
   readonly area: number;
   /** Greatest |H_t| at a node (a corner of a magnetic part has no finite one), A/m, and where, m. */
@@ -55,19 +57,23 @@ export function surfaceField(solution: Solution, regions: readonly number[]): Su
   const { re, im } = nodalLoads(solution, cells);
   const hRe = solveMass(solution, chain, re);
   const hIm = solveMass(solution, chain, im);
-  let square = 0;
+  let [along, across] = [0, 0];
   for (let e = 0; e * 3 < chain.nodes.length; e++) {
     for (let k = 0; k < 9; k++) {
       const i = chain.nodes[e * 3 + Math.floor(k / 3)];
       const j = chain.nodes[e * 3 + (k % 3)];
-      square += chain.areaMass[e * 9 + k] * (hRe[i] * hRe[j] + hIm[i] * hIm[j]);
+      along += chain.areaMass[e * 9 + k] * hRe[i] * hRe[j];
+      across += chain.areaMass[e * 9 + k] * hIm[i] * hIm[j];
     }
   }
   const { grid } = solution.prepared;
   let at = chain.nodes[0];
   for (const i of chain.nodes) if (Math.hypot(hRe[i], hIm[i]) > Math.hypot(hRe[at], hIm[at])) at = i;
+  const rms = Math.sqrt((along + across) / chain.area);
+  const shareOf = (square: number): number => (rms > 0 ? square / chain.area / rms : 0);
   return {
-    rms: Math.sqrt(square / chain.area),
+    rms,
+    shares: [shareOf(along), shareOf(across)],
     area: chain.area,
     peak: Math.hypot(hRe[at], hIm[at]),
     peakR: grid.r[at],
