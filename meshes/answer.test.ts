@@ -44,7 +44,10 @@ const draft = (currentA: number) =>
       },
     ],
     drive: { frequencyHz: 8000, currentA },
-    strayPointsMm: [[200, 20]],
+    strayPointsMm: [
+      [200, 20],
+      [25.5, 0],
+    ],
     accuracyPercent: 1,
   });
 
@@ -91,6 +94,9 @@ describe("one grid's answer", () => {
     expect(answer.orders.get("empty.R")).toBeCloseTo(4 / 3, 12);
     expect(answer.orders.get("part0.peak")).toBeLessThan(1);
     expect(answer.orders.get("part0.surfaceH")).toBeLessThan(1);
+    // Far away by a sum over all sources; within copper from the cell there.
+    expect(answer.orders.get("stray0")).toBeCloseTo(4 / 3, 12);
+    expect(answer.orders.get("stray1")).toBeLessThan(1);
     const round = checkDesign({
       coil: checked.design.coil,
       parts: [
@@ -134,6 +140,16 @@ describe("the result document's figures", () => {
       [once.loaded?.inductanceH.value, twice.loaded?.inductanceH.value, 1],
     ] as const;
     for (const [a, b, factor] of pairs) expect((b ?? 0) / (a ?? 1)).toBeCloseTo(factor, 9);
+  });
+
+  it("the asked accuracy holds for R, L and the power of each part that takes 1 %", () => {
+    expect(once.numerics.accuracyMet).toBe(true);
+    const states = [once.empty, once.loaded].flatMap((t) =>
+      t === null ? [] : [t.resistanceOhm, t.inductanceH],
+    );
+    const powers = once.parts.map((p) => p.powerW).filter((p) => p.value > 0.01 * once.power.totalW.value);
+    expect(powers.length).toBeGreaterThan(0);
+    for (const u of [...states, ...powers]) expect(u.plusMinus).toBeLessThanOrEqual(0.01 * u.value);
   });
 
   it("leads are in R, L and the coil's power, turns are the rest of it", () => {
