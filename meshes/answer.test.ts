@@ -125,6 +125,15 @@ describe("one grid's answer", () => {
   });
 });
 
+describe("a lagging guide", () => {
+  it("has ν = 1/(µr (1 − j tan δ))", () => {
+    const { re = 0, im = 0 } = built.materials("empty")[built.regionOfBody(2)]?.reluctivity ?? {};
+    const [mu, lag] = [30, 30 * 0.02];
+    expect(re * mu + im * lag).toBeCloseTo(1, 12);
+    expect(im * mu - re * lag).toBeCloseTo(0, 12);
+  });
+});
+
 describe("the result document's figures", () => {
   const part = (r: Result, i: number) => r.parts[i] as Result["parts"][number];
 

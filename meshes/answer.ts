@@ -35,8 +35,11 @@ export interface PartFigures {
   readonly region: number;
   readonly power: number;
   readonly surfaceH: number;
+  readonly surfaceShares: readonly number[];
   readonly surfaceArea: number;
   readonly peak: number;
+  /** Densities a little above and below the peak's share of volume. */
+  readonly besidePeak: readonly number[];
   /** [r, z], m; null where no heat arises. */
   readonly hotSpot: readonly [number, number] | null;
   readonly slices: readonly number[];
@@ -131,20 +134,24 @@ function addTerminals(table: Table, state: State, { solution, losses }: Solved, 
   table.add(`${state}.X`, im, order, reactive);
 }
 
-/** Powers of coil, heated parts and the rest, each part by its slices. */
+/** Powers of coil, heated parts and the rest, each part and guide by its slices. */
 function addPowers(
   table: Table,
   scene: Scene,
   built: Built,
-  { losses }: Solved,
+  working: Solved,
   figures: readonly PartFigures[],
   order: number,
 ): void {
+  const { losses } = working;
   const slices = (heated: boolean): number[] =>
     figures.filter((p) => p.body.heated === heated).flatMap((p) => p.slices.map((s) => s * p.power));
-  const guides = scene.bodies.flatMap((b, i) =>
-    b.role === "guide" ? [losses.regionPower[built.regionOfBody(i)] ?? 0] : [],
-  );
+  const guides = scene.bodies.flatMap((b, i) => {
+    if (b.role !== "guide") return [];
+    const region = built.regionOfBody(i);
+    const power = losses.regionPower[region] ?? 0;
+    return slicesOf(working, b, region, power).map((s) => s * power);
+  });
   const sums: [string, number[]][] = [
     ["coil", [...losses.turnPower]],
     ["heated", slices(true)],
@@ -159,19 +166,26 @@ function addPowers(
 function figuresOf({ solution, losses }: Solved, body: Body, region: number): PartFigures {
   const surface = surfaceField(solution, [region]);
   const power = losses.regionPower[region] ?? 0;
-  const { low, high } = extentOf(body);
-  const heights = Array.from({ length: SLICES + 1 }, (_, k) => low + ((high - low) * k) / SLICES);
   const hot = power > 0 ? quantileDensity(solution, [region], 0.999) : null;
   return {
     body,
     region,
     power,
     surfaceH: surface.rms,
+    surfaceShares: surface.shares,
     surfaceArea: surface.area,
     peak: hot?.density ?? 0,
+    besidePeak: hot?.beside ?? [],
     hotSpot: hot === null ? null : [hot.r, hot.z],
-    slices: power > 0 ? [...sliceShares(solution, losses, [region], heights)] : heights.slice(1).map(() => 0),
+    slices: slicesOf({ solution, losses }, body, region, power),
   };
+}
+
+/** Shares of a body's power in slices of equal height, bottom to top; all 0 where no heat arises. */
+function slicesOf({ solution, losses }: Solved, body: Body, region: number, power: number): number[] {
+  const { low, high } = extentOf(body);
+  const heights = Array.from({ length: SLICES + 1 }, (_, k) => low + ((high - low) * k) / SLICES);
+  return power > 0 ? [...sliceShares(solution, losses, [region], heights)] : heights.slice(1).map(() => 0);
 }
 
 function addPart(table: Table, p: PartFigures, i: number, order: number): void {
@@ -181,8 +195,14 @@ function addPart(table: Table, p: PartFigures, i: number, order: number): void {
     order,
     p.slices.map((s) => s * p.power),
   );
-  table.add(`part${i}.surfaceH`, p.surfaceH, LOCAL_ORDER);
-  table.add(`part${i}.peak`, p.peak, LOCAL_ORDER);
+  table.add(`part${i}.surfaceH`, p.surfaceH, LOCAL_ORDER, p.surfaceShares);
+  const near = [p.peak, ...p.besidePeak];
+  table.add(
+    `part${i}.peak`,
+    p.peak,
+    LOCAL_ORDER,
+    near.map((d) => d / near.length),
+  );
 }
 
 /** By summing over all ring sources; at points too near to one, from the cell that holds the point, which converges slower. */

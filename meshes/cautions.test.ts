@@ -32,6 +32,8 @@ function part(surfaceH: number, peak: number, material: Partial<SceneMaterial> =
     peak,
     hotSpot: null,
     slices: [],
+    surfaceShares: [],
+    besidePeak: [],
   };
 }
 

@@ -62,6 +62,41 @@ const hard = [
       { shape: "cylinder", diameterMm: 25, lengthMm: 10, centreZMm: 15, material: { resistivityOhmM: 1e-6 } },
     ],
   },
+  {
+    name: "two equal parts whose faces meet in the plane of symmetry",
+    coil: {
+      conductor: { section: "roundTube", outsideDiameterMm: 6, wallMm: 1, material: "copper" },
+      winding: { form: "helix", boreDiameterMm: 60, turns: 4, pitchMm: 8 },
+    },
+    parts: [10, -10].map((centreZMm) => ({
+      shape: "cylinder",
+      diameterMm: 40,
+      lengthMm: 20,
+      centreZMm,
+      material: { resistivityOhmM: 2e-7 },
+    })),
+  },
+  {
+    name: "parts that touch in a wedge of little more than half a degree",
+    coil: {
+      conductor: { section: "roundTube", outsideDiameterMm: 6, wallMm: 1, material: "copper" },
+      winding: { form: "helix", boreDiameterMm: 60, turns: 3, pitchMm: 8 },
+    },
+    parts: [
+      [
+        [0, -10],
+        [20, -10],
+        [20, 0],
+        [0, 0],
+      ],
+      [
+        [10, 0],
+        [20, 0.1],
+        [20, 10],
+        [10, 10],
+      ],
+    ].map((pointsMm) => ({ shape: "outline", pointsMm, material: { resistivityOhmM: 2e-7 } })),
+  },
 ];
 
 describe("grids that once came out wrong", () => {

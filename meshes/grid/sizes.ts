@@ -20,8 +20,8 @@ const GROWTH = 0.5;
 /** First cell at a right-angled corner of a conductor, in skin depths; of a magnetic one, whose corner field is singular. */
 const CORNER_SKIN = 0.85;
 const CORNER_SKIN_MAGNETIC = 0.45;
-/** First cell at a corner of a magnetic body that does not conduct, in lengths of its shorter side. */
-const CORNER_SHARE = 0.1;
+/** First cell at a corner of a magnetic body that does not conduct, in lengths of its shorter side: its field is singular like that of a conducting one. */
+const CORNER_SHARE = 0.02;
 /** Longest cell on an arc, in radii: about a sixth of a quarter turn on a sphere, less on a wire's far side. */
 const ARC_SHARE = 0.62;
 /** Widest angle one edge of the filling may span: its bulge must stay inside the faces beside it, rad. */
