@@ -74,26 +74,13 @@ function discSides(shape: Extract<Shape, { kind: "disc" }>, index: number): Raw[
   }));
 }
 
-/** The part of a side in z ≥ 0. */
+/** The part of a side in z ≥ 0. Arcs end at the plane: a disc that crosses it is its own mirror image, centred on it. */
 function keepUpper(side: Raw): Raw[] {
   const { p, q, arc } = side;
   if (p[1] >= 0 && q[1] >= 0) return [side];
-  if (p[1] <= 0 && q[1] <= 0) return [];
-  if (arc === null) {
-    const cut: Pair = [p[0] + ((q[0] - p[0]) * p[1]) / (p[1] - q[1]), 0];
-    return [p[1] > 0 ? { ...side, q: cut } : { ...side, p: cut }];
-  }
-  const rising = q[1] > 0;
-  const dz = -arc.centre[1] / arc.radius;
-  const half = Math.sqrt(1 - dz * dz);
-  const end = (p[0] + q[0]) / 2 > arc.centre[0] ? half : -half;
-  const cut: Pair = [arc.centre[0] + arc.radius * end, 0];
-  const angle = Math.atan2(dz, end);
-  let turn = angle - arc.from;
-  if (turn < 0) turn += 2 * Math.PI;
-  return rising
-    ? [{ ...side, p: cut, arc: { ...arc, from: arc.from + turn, sweep: arc.sweep - turn } }]
-    : [{ ...side, q: cut, arc: { ...arc, sweep: turn } }];
+  if (arc !== null || (p[1] <= 0 && q[1] <= 0)) return [];
+  const cut: Pair = [p[0] + ((q[0] - p[0]) * p[1]) / (p[1] - q[1]), 0];
+  return [p[1] > 0 ? { ...side, q: cut } : { ...side, p: cut }];
 }
 
 /** Straight sides split at every corner that lies on them. */
