@@ -1,6 +1,7 @@
 /**
- * Builds a TypeScript entry into one file of plain JavaScript, only when something it was made from has changed.
- * The list of those files, with their sizes and dates, is the bundle's own last line: bundle and list can never disagree.
+ * Builds at need what has to be built: the program (TypeScript to plain JavaScript in dist/) and the page (dist/viewer/).
+ * Each is built again only when a file it was made from has changed. The list of those files, with their sizes and dates,
+ * lies inside what was built, in the file that is put in place last: outcome and list can never disagree.
  */
 import {
   existsSync,
@@ -13,7 +14,7 @@ import {
   writeFileSync,
 } from "node:fs";
 import { tmpdir } from "node:os";
-import { dirname, join } from "node:path";
+import { basename, dirname, join, relative } from "node:path";
 import { pathToFileURL } from "node:url";
 import { root } from "./setup.mjs";
 
@@ -25,26 +26,56 @@ function stamp(path) {
   return stat ? [stat.size, stat.mtimeMs] : [0, 0];
 }
 
+/** The files `paths` with size and date; one written while we built may have been read before or after and is distrusted. */
+function stamped(paths, started) {
+  const own = [".ci/bundle.mjs", "package.json", "package-lock.json"];
+  return [...new Set([...paths, ...own])].map((path) => {
+    const [size, date] = stamp(path);
+    return [path, size, date > started ? -1 : date];
+  });
+}
+
+/** Whether every file of a list is as it was. */
+const unchanged = (sources) =>
+  sources.every(([path, size, date]) => {
+    const now = stamp(path);
+    return now[0] === size && now[1] === date;
+  });
+
 /** Whether the bundle exists and every file it was made from is as it was. */
 function fresh(file) {
   if (!existsSync(file)) return false;
   const text = readFileSync(file, "utf8");
   const at = text.lastIndexOf(mark);
-  if (at < 0) return false;
-  return JSON.parse(text.slice(at + mark.length)).every(([path, size, date]) => {
-    const now = stamp(path);
-    return now[0] === size && now[1] === date;
-  });
+  return at >= 0 && unchanged(JSON.parse(text.slice(at + mark.length)));
 }
 
-/** The bundled text of an entry, its list of sources as the last line. */
-async function bundle(entry) {
+/** Packages that only the service needs; they stay in node_modules, so that a single solve starts without reading them. */
+const external = [
+  "better-sqlite3",
+  "better-sse",
+  "compression",
+  "express",
+  "helmet",
+  "kysely",
+  "pino",
+  "pino-http",
+  "piscina",
+];
+
+/** The bundled files of the entries { name: path }, as [file name, text], pieces in common first. */
+async function bundle(entries) {
   const started = Date.now();
   const { build } = await import("esbuild");
   const made = await build({
     absWorkingDir: root,
-    entryPoints: [entry],
+    entryPoints: entries,
+    outdir: join(root, "dist"),
+    outExtension: { ".js": ".mjs" },
+    entryNames: "[name]",
+    chunkNames: "pieces/[hash]",
     bundle: true,
+    splitting: true,
     write: false,
     metafile: true,
     platform: "node",
@@ -53,18 +84,18 @@ async function bundle(entry) {
     minify: true,
     legalComments: "none",
     logLevel: "silent",
+    external,
     // CommonJS packages in the bundle ask for Node's own modules with require, which a module file does not have.
     banner: {
       js: 'import { createRequire as makeRequire } from "node:module"; const require = makeRequire(import.meta.url);',
     },
   });
-  const own = [".ci/bundle.mjs", "package.json", "package-lock.json"];
-  const sources = [...Object.keys(made.metafile.inputs), ...own].map((path) => {
-    const [size, date] = stamp(path);
-    // A file written while we built may have been read before or after: distrust it, so that the next start builds again.
-    return [path, size, date > started ? -1 : date];
-  });
-  return `${made.outputFiles[0].text}${mark}${JSON.stringify(sources)}`;
+  const note = `${mark}${JSON.stringify(stamped(Object.keys(made.metafile.inputs), started))}`;
+  const names = Object.keys(entries).map((name) => `${name}.mjs`);
+  return made.outputFiles
+    .map(({ path, text }) => [relative(join(root, "dist"), path), text])
+    .map(([name, text]) => (names.includes(name) ? [name, text + note] : [name, text]))
+    .sort(([a], [b]) => names.indexOf(a) - names.indexOf(b));
 }
 
 /** Puts the text in place in one step, so that two starts at once never read half a file. */
@@ -79,21 +110,59 @@ function put(file, text) {
   }
 }
 
-/** Path of the up-to-date bundle of `entry` (a path under the root), called `name`, built at need. */
-async function bundled(entry, name) {
-  const file = join(root, "dist", `${name}.mjs`);
-  if (fresh(file)) return file;
-  const text = await bundle(entry);
+/**
+ * Folder of the up-to-date bundles `entries` ({ name: path under the root }), built at need. Files are put in place in the
+ * bundle's order; the entries come last, and what they import has its content's hash for a name.
+ */
+async function bundled(entries) {
+  const folder = join(root, "dist");
+  if (Object.keys(entries).every((name) => fresh(join(folder, `${name}.mjs`)))) return folder;
+  const files = await bundle(entries);
   try {
-    put(file, text);
-    return file;
+    for (const [name, text] of files) put(join(folder, name), text);
+    return folder;
   } catch (error) {
     if (!["EACCES", "EROFS", "EPERM"].includes(error.code)) throw error;
-    const folder = mkdtempSync(join(tmpdir(), "emberturn-"));
-    process.on("exit", () => rmSync(folder, { recursive: true, force: true }));
-    const elsewhere = join(folder, `${name}.mjs`);
-    writeFileSync(elsewhere, text);
+    const elsewhere = mkdtempSync(join(tmpdir(), "emberturn-"));
+    process.on("exit", () => rmSync(elsewhere, { recursive: true, force: true }));
+    for (const [name, text] of files) put(join(elsewhere, name), text);
     return elsewhere;
+  }
+}
+
+/** Builds the page into dist/viewer/ at need. */
+export async function builtViewer() {
+  const note = join(root, "dist/viewer/made-from.json");
+  if (existsSync(note) && unchanged(JSON.parse(readFileSync(note, "utf8")))) return;
+  const started = Date.now();
+  const { build } = await import("vite");
+  const draft = join(root, `dist/viewer.${process.pid}.tmp`);
+  const sources = new Set();
+  const list = {
+    name: "made-from",
+    generateBundle() {
+      for (const id of this.getModuleIds()) {
+        const path = relative(root, id.split("?")[0]);
+        if (!path.startsWith("..") && !path.startsWith("\0")) sources.add(path);
+      }
+    },
+  };
+  try {
+    await build({
+      configFile: join(root, ".config/vite.config.ts"),
+      build: { outDir: draft, emptyOutDir: true },
+      plugins: [list],
+      logLevel: "error",
+    });
+    const made = stamped(
+      [...sources].filter((path) => existsSync(join(root, path))),
+      started,
+    );
+    writeFileSync(join(draft, basename(note)), JSON.stringify(made));
+    rmSync(dirname(note), { recursive: true, force: true });
+    renameSync(draft, dirname(note));
+  } finally {
+    rmSync(draft, { recursive: true, force: true });
   }
 }
 
@@ -106,16 +175,35 @@ function words(error) {
     .join("\n");
 }
 
-/** Runs a TypeScript entry in this process, with the given arguments as its command line. */
-export async function runBundled(entry, name, args) {
-  let file;
+/** Builds what `needed` builds; in words on stderr, with status 1, when it cannot. */
+async function built(needed) {
   try {
-    file = await bundled(entry, name);
+    return await needed();
   } catch (error) {
     console.error(`emberturn could not be built: ${words(error)}`);
     process.exitCode = 1;
-    return;
+    return null;
   }
+}
+
+/** Runs the bundle `name` in this process, with the given arguments as its command line. */
+async function run(folder, name, args) {
+  const file = join(folder, `${name}.mjs`);
   process.argv = [process.argv[0], file, ...args];
   await import(pathToFileURL(file).href);
+}
+
+/** Runs the command line in this process; with the page built where `args` start the service. */
+export async function runEmberturn(args) {
+  const folder = await built(async () => {
+    if (args[0] === "serve") await builtViewer();
+    return bundled({ emberturn: "api/cli/main.ts", pooled: "api/engine/pooled.ts" });
+  });
+  if (folder !== null) await run(folder, "emberturn", args);
+}
+
+/** Runs a TypeScript entry of its own in this process, with the given arguments as its command line. */
+export async function runBundled(entry, name, args) {
+  const folder = await built(() => bundled({ [name]: entry }));
+  if (folder !== null) await run(folder, name, args);
 }

@@ -1,6 +1,6 @@
 /** Who may import whom. One way only: solver <- meshes; solver, meshes <- validation; solver, meshes <- api <- viewer. */
 /** Tests, and what only tests read. */
-const test = "(\\.test|/fixtures|/drafts)\\.ts$";
+const test = "(\\.test|/fixtures|/drafts)\\.tsx?$|^viewer/e2e/";
 
 /** @type {import("dependency-cruiser").IConfiguration} */
 module.exports = {
@@ -60,10 +60,17 @@ module.exports = {
     {
       name: "viewer-sees-the-contract-only",
       comment:
-        "The page is built for browsers: of api/ it sees api/contract/, of the rest pure helpers of meshes/.",
+        "The page is built for browsers: of api/ it sees api/contract/ and api/format/, of the rest pure helpers of meshes/.",
       severity: "error",
       from: { path: "^viewer/" },
-      to: { path: "^(solver|validation|api/(?!contract/))" },
+      to: { path: "^(solver|validation|api/(?!contract/|format/))" },
+    },
+    {
+      name: "contract-and-format-run-in-browsers",
+      comment: "What the page sees of api/ is free of Node, and of the rest of api/.",
+      severity: "error",
+      from: { path: "^api/(contract|format)/", pathNot: test },
+      to: { path: "^api/(?!contract/|format/)|^node:", dependencyTypesNot: ["type-only"] },
     },
     {
       name: "no-tools-in-the-product",
@@ -83,6 +90,6 @@ module.exports = {
     doNotFollow: { path: "node_modules" },
     tsPreCompilationDeps: true,
     tsConfig: { fileName: "tsconfig.json" },
-    enhancedResolveOptions: { extensions: [".ts", ".js", ".json"] },
+    enhancedResolveOptions: { extensions: [".ts", ".tsx", ".js", ".json", ".css"] },
   },
 };

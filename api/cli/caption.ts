@@ -1,8 +1,8 @@
 /** The words of a heat picture, from a result. */
 import type { Result } from "../../meshes/result.ts";
-import { figure } from "./figures.ts";
+import { figure } from "../format/figures.ts";
+import { coilSentence, driveSentence, printable } from "../format/sentence.ts";
 import type { Caption } from "./picture.ts";
-import { coilSentence, driveSentence, printable } from "./sentence.ts";
 
 /** Title, the design in a sentence, and the figures asked for first. */
 export function captionOf(result: Result): Caption {

@@ -1,6 +1,6 @@
 /** One part's lines in the people's table: its power, its surface, and where its heat sits. */
 import type { DepthShare, PartResult } from "../../meshes/result.ts";
-import { decimalsFor, figure, homelyUnit, percent, plain } from "./figures.ts";
+import { decimalsFor, figure, homelyUnit, percent, plain } from "../format/figures.ts";
 import { columns, wrap } from "./layout.ts";
 
 /** Lines of one part, two blanks in. */

@@ -1,8 +1,8 @@
 import { describe, expect, it } from "vitest";
 import type { HeatMap } from "../../meshes/heatmap.ts";
-import { heatColour } from "./colour.ts";
-import { powerPerLength } from "./heat-profile.ts";
-import { marks, position, roundStep, scaleFor } from "./heat-scale.ts";
+import { heatColour } from "../format/colour.ts";
+import { powerPerLength } from "../format/heat-profile.ts";
+import { marks, position, roundStep, scaleFor } from "../format/heat-scale.ts";
 import { joinCells } from "./patches-of-colour.ts";
 import { renderPicture } from "./picture.ts";
 

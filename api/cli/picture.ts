@@ -3,10 +3,10 @@
  * The solved half stands on the right; the left is its mirror image. Pure: shapes and words in, text out.
  */
 import type { HeatMap, Outline } from "../../meshes/heatmap.ts";
-import { heatColour } from "./colour.ts";
-import { homelyUnit, plain } from "./figures.ts";
-import { powerPerLength } from "./heat-profile.ts";
-import { type HeatScale, marks, position, roundStep, scaleFor } from "./heat-scale.ts";
+import { heatColour } from "../format/colour.ts";
+import { homelyUnit, plain } from "../format/figures.ts";
+import { powerPerLength } from "../format/heat-profile.ts";
+import { type HeatScale, marks, position, roundStep, scaleFor } from "../format/heat-scale.ts";
 import { wrap } from "./layout.ts";
 import { joinCells } from "./patches-of-colour.ts";
 

@@ -2,7 +2,7 @@
 import { Command, CommanderError } from "commander";
 import { version } from "../../package.json";
 import { exitStatus, type Failure, toFailure, UsageError } from "../errors.ts";
-import { printable } from "./sentence.ts";
+import { printable } from "../format/sentence.ts";
 import { type SolveOptions, solveCommand } from "./solve.ts";
 
 /** Runs one command line and sets the process's exit status; `entry` is the bundle to start threads from. */

@@ -1,9 +1,9 @@
 import { describe, expect, it } from "vitest";
 import type { Conductor, Winding } from "../../meshes/design.ts";
 import type { PartResult, Result, Uncertain } from "../../meshes/result.ts";
+import { coilSentence, driveSentence, printable } from "../format/sentence.ts";
 import { captionOf } from "./caption.ts";
 import { lineWidth } from "./layout.ts";
-import { coilSentence, driveSentence, printable } from "./sentence.ts";
 import { renderTable } from "./table.ts";
 
 const q = (value: number, plusMinus = Math.abs(value) / 1000): Uncertain => ({ value, plusMinus });

@@ -11,10 +11,10 @@ import {
   prefixed,
   show,
   type Unit,
-} from "./figures.ts";
+} from "../format/figures.ts";
+import { coilSentence, driveSentence, printable } from "../format/sentence.ts";
 import { type Alignment, columns, wrap } from "./layout.ts";
 import { partSection } from "./part-section.ts";
-import { coilSentence, driveSentence, printable } from "./sentence.ts";
 
 /** How the text is to be dressed. */
 export interface Dress {

@@ -1,0 +1,2 @@
+/** What a thread of the service's pool runs. */
+export {};
