@@ -5,10 +5,12 @@ import { type Built, build, skinDepth } from "./build.ts";
 import { cautions } from "./cautions.ts";
 import type { Checked } from "./check.ts";
 import { currentOf, type PerAmpere, powerAt, terminal } from "./drive.ts";
+import type { Fields } from "./fields.ts";
 import { heatMap } from "./heat.ts";
 import type { HeatMap } from "./heatmap.ts";
 import { helixSurplus } from "./helix.ts";
 import { type LeadPair, leadPair } from "./leadpair.ts";
+import { resample } from "./resample.ts";
 import type { DepthShare, PartResult, Power, Result } from "./result.ts";
 import type { Scene } from "./scene.ts";
 import { extentOf, surfaceDistance } from "./surfaces.ts";
@@ -34,6 +36,8 @@ export interface Hooks {
   readonly signal?: { readonly aborted: boolean };
   /** The process's maximum resident set, bytes; 0 where nobody can tell. */
   readonly peakMemoryBytes?: () => number;
+  /** True: the prediction carries the fields of both states. */
+  readonly fields?: boolean;
 }
 
 /** Thrown when the signal was aborted. */
@@ -47,6 +51,8 @@ export class Cancelled extends Error {
 export interface Prediction {
   readonly result: Result;
   readonly heat: HeatMap;
+  /** There when the hooks ask for it. */
+  readonly fields?: Fields;
 }
 
 /** @throws Cancelled; SolverError or MeshError on a defect. */
@@ -112,8 +118,9 @@ export function predict({ design, scene }: Checked, hooks: Hooks = {}): Predicti
     }),
   };
   const heat = heatMap(scene, finest, current);
+  const fields = hooks.fields === true ? { fields: resample(scene, finest, current) } : {};
   report(1, "done");
-  return { result, heat };
+  return { result, heat, ...fields };
 }
 
 /** A value of the finest grid with its bar; a name nobody put there is a defect, not a zero. */

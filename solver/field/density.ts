@@ -23,6 +23,8 @@ export interface CellSamples {
   readonly z: Float64Array;
   readonly volume: Float64Array;
   readonly density: Float64Array;
+  /** The part of the density that currents make, W/m³: |J|²/σ. */
+  readonly joule: Float64Array;
   /** Corners of the pieces: m, W/m³; length (m + 1)². */
   readonly cornerR: Float64Array;
   readonly cornerZ: Float64Array;
@@ -55,7 +57,7 @@ export function heatSampler(solution: Solution, m: number): (cell: number) => Ce
     const joule = solution.omega ** 2 * solution.materials[region].conductivity;
     const lag = (solution.omega * nu[1]) / MU0;
     const heat = { s, z, re, im, joule, lag };
-    readPoints(middles(cell), heat, out.r, out.z, out.density, out.volume);
+    readPoints(middles(cell), heat, out.r, out.z, out.density, out);
     for (let p = 0; p < out.volume.length; p++) out.volume[p] *= (4 * Math.PI) / (m * m);
     readPoints(drawnIn(cell), heat, out.cornerR, out.cornerZ, out.cornerDensity, null);
     readPlaces(corners(cell).geometry, s, z, out.cornerR, out.cornerZ);
@@ -85,6 +87,7 @@ function emptySamples(m: number): CellSamples {
     z: piece(),
     volume: piece(),
     density: piece(),
+    joule: piece(),
     cornerR: corner(),
     cornerZ: corner(),
     cornerDensity: corner(),
@@ -101,14 +104,14 @@ interface CellHeat {
   readonly lag: number;
 }
 
-/** Places, densities and, where asked for, determinants at the tables' points. One long loop: runs for every sample of a part. */
+/** Places, densities and, where asked for, determinants (as `volume`) and the currents' share at the tables' points. One long loop: runs for every sample of a part. */
 function readPoints(
   tables: CellTables,
   heat: CellHeat,
   outR: Float64Array,
   outZ: Float64Array,
   density: Float64Array,
-  determinant: Float64Array | null,
+  also: { readonly volume: Float64Array; readonly joule: Float64Array } | null,
 ): void {
   const { n, dXi, dEta } = tables.geometry;
   const { field } = tables;
@@ -134,8 +137,11 @@ function readPoints(
     const det = sXi * zEta - sEta * zXi;
     outR[p] = Math.sqrt(sp);
     outZ[p] = zp;
-    if (determinant !== null) determinant[p] = det;
     density[p] = (joule * (x * x + y * y)) / sp;
+    if (also !== null) {
+      also.volume[p] = det;
+      also.joule[p] = density[p];
+    }
     if (lag === 0) continue;
     const bySquares = (xXi * zEta - xEta * zXi) ** 2 + (yXi * zEta - yEta * zXi) ** 2;
     const byHeights = (xEta * sXi - xXi * sEta) ** 2 + (yEta * sXi - yXi * sEta) ** 2;

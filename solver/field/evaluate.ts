@@ -60,6 +60,10 @@ export function makeProbe(
 
 const MAP = emptyTable(1);
 const FIELD = emptyTable(1);
+const S_OF = new Float64Array(NODES);
+/** ψ, ψ_ξ, ψ_η. */
+const RE = new Float64Array(3);
+const IM = new Float64Array(3);
 
 function readPlace(solution: Solution, place: Place, r: number): PointField {
   const { grid, integrals } = solution.prepared;
@@ -69,37 +73,47 @@ function readPlace(solution: Solution, place: Place, r: number): PointField {
   const least = touch === 0 ? 1 : 1 - OFF_AXIS;
   const xi = Math.min(least, Math.max(-least, place.xi));
   const eta = Math.min(least, Math.max(-least, place.eta));
-  const s = new Float64Array(NODES);
-  for (let i = 0; i < NODES; i++) s[i] = grid.r[grid.cellNodes[cell * NODES + i]] ** 2;
+  for (let i = 0; i < NODES; i++) S_OF[i] = grid.r[grid.cellNodes[cell * NODES + i]] ** 2;
   shapeAt(kind, xi, eta, MAP);
-  fieldAt(kind, touch, s, xi, eta, FIELD);
-  let [S, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0];
-  const re = [0, 0, 0];
-  const im = [0, 0, 0];
+  let field = MAP;
+  if (touch !== 0) {
+    field = FIELD;
+    fieldAt(kind, touch, S_OF, xi, eta, FIELD);
+  }
+  let S = 0;
+  let sXi = 0;
+  let sEta = 0;
+  let zXi = 0;
+  let zEta = 0;
+  RE.fill(0);
+  IM.fill(0);
   for (let i = 0; i < NODES; i++) {
     const node = grid.cellNodes[cell * NODES + i];
-    S += MAP.n[i] * s[i];
-    sXi += MAP.dXi[i] * s[i];
-    sEta += MAP.dEta[i] * s[i];
+    S += MAP.n[i] * S_OF[i];
+    sXi += MAP.dXi[i] * S_OF[i];
+    sEta += MAP.dEta[i] * S_OF[i];
     zXi += MAP.dXi[i] * grid.z[node];
     zEta += MAP.dEta[i] * grid.z[node];
-    const [n, a, b] = [FIELD.n[i], FIELD.dXi[i], FIELD.dEta[i]];
-    const [x, y] = [solution.psi.re[node], solution.psi.im[node]];
-    re[0] += n * x;
-    re[1] += a * x;
-    re[2] += b * x;
-    im[0] += n * y;
-    im[1] += a * y;
-    im[2] += b * y;
+    const n = field.n[i];
+    const a = field.dXi[i];
+    const b = field.dEta[i];
+    const x = solution.psi.re[node];
+    const y = solution.psi.im[node];
+    RE[0] += n * x;
+    RE[1] += a * x;
+    RE[2] += b * x;
+    IM[0] += n * y;
+    IM[1] += a * y;
+    IM[2] += b * y;
   }
   const det = sXi * zEta - sEta * zXi;
-  const bz = ([, a, b]: number[]): number => (2 * (a * zEta - b * zXi)) / det;
-  const br = ([, a, b]: number[]): number => (-r * (b * sXi - a * sEta)) / (det * S);
-  const psi = ([n]: number[]): number => (n * r * r) / S;
+  const bz = (v: Float64Array): number => (2 * (v[1] * zEta - v[2] * zXi)) / det;
+  const br = (v: Float64Array): number => (-r * (v[2] * sXi - v[1] * sEta)) / (det * S);
+  const psi = (v: Float64Array): number => (v[0] * r * r) / S;
   return {
-    br: { re: br(re), im: br(im) },
-    bz: { re: bz(re), im: bz(im) },
-    psi: { re: psi(re), im: psi(im) },
+    br: { re: br(RE), im: br(IM) },
+    bz: { re: bz(RE), im: bz(IM) },
+    psi: { re: psi(RE), im: psi(IM) },
     cell,
   };
 }

@@ -93,6 +93,11 @@ function boxOf(
 }
 
 const SHAPE = emptyTable(1);
+const CELL_S = new Float64Array(NODES);
+const CELL_Z = new Float64Array(NODES);
+/** Newton's iteration goes no further from a cell's middle; so many steps in a row that end there say that the place lies elsewhere. */
+const LIMIT = 2;
+const PATIENCE = 3;
 
 /** (ξ, η) of (s, z) on a cell's map, continued beyond its edges; far off where Newton's iteration finds none. */
 function invert(
@@ -104,28 +109,41 @@ function invert(
   s: number,
   height: number,
 ): Place {
+  for (let i = 0; i < NODES; i++) {
+    const node = nodes[cell * NODES + i];
+    CELL_S[i] = r[node] * r[node];
+    CELL_Z[i] = z[node];
+  }
   let xi = 0;
   let eta = 0;
+  let atLimit = 0;
   for (let step = 0; step < STEPS; step++) {
     shapeAt(kind, xi, eta, SHAPE);
-    let [es, ez, sXi, sEta, zXi, zEta] = [-s, -height, 0, 0, 0, 0];
+    let es = -s;
+    let ez = -height;
+    let sXi = 0;
+    let sEta = 0;
+    let zXi = 0;
+    let zEta = 0;
     for (let i = 0; i < NODES; i++) {
-      const node = nodes[cell * NODES + i];
-      const si = r[node] * r[node];
+      const si = CELL_S[i];
+      const zi = CELL_Z[i];
       es += SHAPE.n[i] * si;
-      ez += SHAPE.n[i] * z[node];
+      ez += SHAPE.n[i] * zi;
       sXi += SHAPE.dXi[i] * si;
       sEta += SHAPE.dEta[i] * si;
-      zXi += SHAPE.dXi[i] * z[node];
-      zEta += SHAPE.dEta[i] * z[node];
+      zXi += SHAPE.dXi[i] * zi;
+      zEta += SHAPE.dEta[i] * zi;
     }
     const det = sXi * zEta - sEta * zXi;
     if (!(Math.abs(det) > 0)) break;
     const dXi = (es * zEta - ez * sEta) / det;
     const dEta = (ez * sXi - es * zXi) / det;
-    xi = Math.min(2, Math.max(-2, xi - dXi));
-    eta = Math.min(2, Math.max(-2, eta - dEta));
+    xi = Math.min(LIMIT, Math.max(-LIMIT, xi - dXi));
+    eta = Math.min(LIMIT, Math.max(-LIMIT, eta - dEta));
     if (Math.abs(dXi) + Math.abs(dEta) < EXACT) break;
+    atLimit = Math.max(Math.abs(xi), Math.abs(eta)) === LIMIT ? atLimit + 1 : 0;
+    if (atLimit === PATIENCE) break;
   }
   return { cell, xi, eta };
 }

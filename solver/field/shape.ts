@@ -74,6 +74,10 @@ const B = new Float64Array(9);
 
 /** The nine functions and derivatives at (ξ, η) of a cell of this kind, written at place `at` of the table. */
 export function shapeAt(kind: number, xi: number, eta: number, out: ShapeTable, at = 0): void {
+  if (kind === 0) {
+    ordinaryAt(xi, eta, out, at * NODES);
+    return;
+  }
   const m0 = middleOf(kind % 3);
   const m1 = middleOf(Math.floor(kind / 3) % 3);
   const n0 = middleOf(Math.floor(kind / 9) % 3);
@@ -91,6 +95,30 @@ export function shapeAt(kind: number, xi: number, eta: number, out: ShapeTable, 
       out.dEta[k] = A[a] * B[3 + b] + A[6 + a] * dm * B[b];
     }
   }
+}
+
+/** The same for an ordinary cell, to the same digits: nearly all are, and finding places asks for millions. */
+function ordinaryAt(xi: number, eta: number, out: ShapeTable, from: number): void {
+  ordinaryQuadratics(xi, A);
+  ordinaryQuadratics(eta, B);
+  for (let b = 0; b < 3; b++) {
+    for (let a = 0; a < 3; a++) {
+      const k = from + a + 3 * b;
+      out.n[k] = A[a] * B[b];
+      out.dXi[k] = A[3 + a] * B[b];
+      out.dEta[k] = A[a] * B[3 + b];
+    }
+  }
+}
+
+/** quadratics(x, 0, out) without the derivatives by m. */
+function ordinaryQuadratics(x: number, out: Float64Array): void {
+  out[0] = (x * (x - 1)) / 2;
+  out[1] = 1 - x * x;
+  out[2] = (x * (x + 1)) / 2;
+  out[3] = x - 0.5;
+  out[4] = -2 * x;
+  out[5] = x + 0.5;
 }
 
 /** An empty table of `points` points. */
