@@ -34,3 +34,8 @@ export const faults = computed(() => (verdict.value.fit ? [] : verdict.value.fau
 export function write(pointer: string, value: unknown): void {
   draft.value = withValueAt(draft.value, pointer, value);
 }
+
+/** What the stage shows. */
+export type View = "drawing" | "solid" | "flat";
+
+export const view = signal<View>("drawing");
