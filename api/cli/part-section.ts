@@ -1,12 +1,14 @@
 /** One part's lines in the people's table: its power, its surface, and where its heat sits. */
-import type { DepthShare, PartResult } from "../../meshes/result.ts";
+import type { Part } from "../../meshes/design.ts";
+import type { PartResult } from "../../meshes/result.ts";
 import { decimalsFor, figure, homelyUnit, percent, plain } from "../format/figures.ts";
+import { heatWords } from "../format/heat-words.ts";
 import { columns, wrap } from "./layout.ts";
 
-/** Lines of one part, two blanks in. */
-export function partSection(part: PartResult): string[] {
+/** Lines of one part, two blanks in; `shape` is the part as designed. */
+export function partSection(part: PartResult, shape: Part | undefined): string[] {
   if (part.powerW.value === 0) return ["  takes no heat"];
-  return [...keyFigures(part), ...whereItSits(part), ...slices(part.sliceShares)];
+  return [...keyFigures(part), ...whereItSits(part, shape), ...slices(part.sliceShares)];
 }
 
 function keyFigures(part: PartResult): string[] {
@@ -34,38 +36,11 @@ function spot(at: readonly number[] | null): string {
   return ` at r ${r}, z ${z} mm`;
 }
 
-/** "Its heat: 63 % within 0.16 mm, … of the surface; most of it around mid-height." */
-function whereItSits(part: PartResult): string[] {
-  const sentences = [
-    depths(part.depthShares, "the surface"),
-    // A solid cylinder's side tells little beyond its nearest surface; with a bore the two sides are worth telling apart.
-    part.boreDepthShares === null ? "" : depths(part.sideDepthShares, "the outer side"),
-    depths(part.boreDepthShares, "the bore"),
-    height(part.sliceShares),
-  ];
-  return wrap(`Its heat: ${sentences.filter((sentence) => sentence !== "").join("; ")}.`, "  ");
-}
-
-function depths(shares: readonly DepthShare[] | null, from: string): string {
-  if (shares === null || shares.length === 0) return "";
-  if (shares.every(({ share }) => share < 5e-4)) return `next to none at ${from}`;
-  if (shares.every(({ share }) => share > 0.9995))
-    return `all within ${plain(shares[0]!.depthMm, 3)} mm of ${from}`;
-  const list = shares.map(({ depthMm, share }) => `${percent(share)} within ${plain(depthMm, 3)} mm`);
-  return `${list.join(", ")} of ${from}`;
-}
-
-/** Where along the height most of it lies, in words. */
-function height(shares: readonly number[]): string {
-  const sum = (from: number, to: number): number => shares.slice(from, to).reduce((a, b) => a + b, 0);
-  if (Math.max(...shares) < 1.5 * Math.min(...shares)) return "spread evenly along its height";
-  const upper = sum(4, 8);
-  const middle = sum(2, 6);
-  if (upper > 0.6) return `${percent(upper)} in the upper half`;
-  if (upper < 0.4) return `${percent(1 - upper)} in the lower half`;
-  if (middle > 0.6) return "most of it around mid-height";
-  if (middle < 0.4) return "most of it towards both ends";
-  return upper >= 0.5 ? `${percent(upper)} in the upper half` : `${percent(1 - upper)} in the lower half`;
+/** "Its heat: 63 % within 0.26 mm of the side, hottest at mid-length. 63.2 % within …; …." */
+function whereItSits(part: PartResult, shape: Part | undefined): string[] {
+  const { short, more } = heatWords(part, shape);
+  const said = [short, more.join("; ")].filter((words) => words !== "");
+  return said.length === 0 ? [] : wrap(`Its heat: ${said.join(". ")}.`, "  ");
 }
 
 const barLength = 30;

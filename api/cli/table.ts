@@ -40,7 +40,9 @@ export function renderTable(result: Result, { colour }: Dress): string {
     ...wrap(`${coilSentence(result.design.coil)}; driven with ${driveSentence(result.design.drive)}.`),
     ...section("AT THE COIL'S TERMINALS", terminalLines(result.empty, result.loaded)),
     ...section("POWER AND SUPPLY", powerLines(result.power)),
-    ...result.parts.flatMap((part) => section(`PART: ${part.name || "part"}`, partSection(part))),
+    ...result.parts.flatMap((part, k) =>
+      section(`PART: ${part.name || "part"}`, partSection(part, result.design.parts[k])),
+    ),
     ...section(
       `TURNS (counted from 0, in the winding's order; power in the copper of each, ${watts.symbol})`,
       turnLines(result, watts),
