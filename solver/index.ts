@@ -3,7 +3,7 @@ export { MU0 } from "./constants.ts";
 export { type CellSamples, heatSampler } from "./field/density.ts";
 export { makeProbe, type PointField } from "./field/evaluate.ts";
 export type { CellIntegrals } from "./field/integrals.ts";
-export { type Locator, makeLocator, type Place } from "./field/locate.ts";
+export { makeLocator, type Place } from "./field/locate.ts";
 export { type Losses, lossesOf, powerBalance } from "./field/losses.ts";
 export { type HotSpot, quantileDensity, sharesBelow, sliceShares } from "./field/observe.ts";
 export { type CoilSolution, type Prepared, prepare, type Solution, type Tick } from "./field/prepare.ts";

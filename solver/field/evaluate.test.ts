@@ -52,6 +52,32 @@ describe("the locator", () => {
     expect(makeLocator(grids[2])(1, 1.2)).toBeNull();
   });
 
+  it("finds every height on the axis, where the map may be singular, to rounding", () => {
+    const shape = emptyTable(1);
+    grids.forEach((p) => {
+      const { grid, integrals } = p;
+      const locate = makeLocator(p);
+      const axis = Array.from(grid.z).filter((_, i) => grid.r[i] === 0);
+      const [low, high] = [Math.min(...axis), Math.max(...axis)];
+      const inside = grid.exterior?.radius ?? Infinity;
+      for (let k = 0; k <= 1000; k++) {
+        const z = low + ((high - low) * k) / 1000;
+        if (Math.abs(z - (grid.exterior?.centreZ ?? 0)) > inside) continue;
+        const place = locate(0, z);
+        if (place === null) throw new Error(`nothing at height ${z}`);
+        shapeAt(integrals.kind[place.cell], place.xi, place.eta, shape);
+        let [s, height] = [0, 0];
+        for (let i = 0; i < NODES; i++) {
+          const node = grid.cellNodes[place.cell * NODES + i];
+          s += shape.n[i] * grid.r[node] ** 2;
+          height += shape.n[i] * grid.z[node];
+        }
+        expect(Math.abs(s)).toBeLessThan(1e-14);
+        expect(Math.abs(height - z)).toBeLessThan(1e-12 * (high - low));
+      }
+    });
+  });
+
   it("prefers on the axis a cell with a side there", () => {
     const p = grids[2];
     const place = makeLocator(p)(0, -0.1);

@@ -50,9 +50,13 @@ export function makeLocator(prepared: Prepared): Locator {
     let least = TOLERATED;
     for (const c of buckets.get(row(z) * side + column(r)) ?? []) {
       if (r < box[4 * c] || r > box[4 * c + 2] || z < box[4 * c + 1] || z > box[4 * c + 3]) continue;
-      const place = invert(grid.r, grid.z, grid.cellNodes, integrals.kind[c], c, r * r, z);
+      const touch = integrals.touch[c];
+      const goodOnAxis = r > 0 || sideOnAxis(touch);
+      const place =
+        r === 0 && goodOnAxis
+          ? alongAxis(grid.z, grid.cellNodes, touch, c, z)
+          : invert(grid.r, grid.z, grid.cellNodes, integrals.kind[c], c, r * r, z);
       const beyond = Math.max(Math.abs(place.xi), Math.abs(place.eta)) - 1;
-      const goodOnAxis = r > 0 || sideOnAxis(integrals.touch[c]);
       if (beyond <= INSIDE && goodOnAxis) return place;
       if (beyond < least) {
         least = beyond;
@@ -98,6 +102,23 @@ const CELL_Z = new Float64Array(NODES);
 /** Newton's iteration goes no further from a cell's middle; so many steps in a row that end there say that the place lies elsewhere. */
 const LIMIT = 2;
 const PATIENCE = 3;
+
+/**
+ * The place of height z on a cell's side on the axis. The map may be singular there (s goes with the square of the distance where edges leave at a slant),
+ * so the side's own quadratic is solved: z = z_1 + (z_2 − z_0) y/2 + (z_0 − 2z_1 + z_2) y²/2.
+ */
+function alongAxis(z: Float64Array, nodes: Int32Array, touch: number, cell: number, height: number): Place {
+  const vertical = touch <= 2;
+  const first = cell * NODES + [0, 0, 2, 0, 6][touch];
+  const step = vertical ? 3 : 1;
+  const [z0, z1, z2] = [z[nodes[first]], z[nodes[first + step]], z[nodes[first + 2 * step]]];
+  const half = (z2 - z0) / 4;
+  const bend = (z0 - 2 * z1 + z2) / 2;
+  const root = Math.sqrt(Math.max(0, half * half + bend * (height - z1)));
+  const y = (height - z1) / (half + Math.sign(half) * root);
+  const x = touch % 2 === 1 ? -1 : 1;
+  return vertical ? { cell, xi: x, eta: y } : { cell, xi: y, eta: x };
+}
 
 /** (ξ, η) of (s, z) on a cell's map, continued beyond its edges; far off where Newton's iteration finds none. */
 function invert(
