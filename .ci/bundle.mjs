@@ -166,12 +166,14 @@ export async function builtViewer() {
   }
 }
 
-/** What to say when building fails: esbuild's own findings with their places, or what kept it from starting. */
+/** What to say when building fails: the builder's own findings with their places, or what kept it from starting. */
 function words(error) {
   if (error.code === "ERR_MODULE_NOT_FOUND") return "the packages are not installed yet: run `npm ci` first";
   if (!error.errors) return error.message;
   return error.errors
-    .map(({ text, location }) => (location ? `${location.file}:${location.line}: ${text}` : text))
+    .map(({ text, message, location }) =>
+      location ? `${location.file}:${location.line}: ${text}` : (text ?? message),
+    )
     .join("\n");
 }
 

@@ -4,17 +4,7 @@
  */
 import type { Fault } from "../meshes/refusal.ts";
 import { Refusal } from "../meshes/refusal.ts";
-
-/** An `application/problem+json` body, RFC 9457 section 3.1, with our `errors` as an extension member. */
-export interface Problem {
-  readonly type: string;
-  readonly title: string;
-  /** The HTTP status. */
-  readonly status: number;
-  readonly detail: string;
-  /** One entry a fault; empty when the document is not to blame. */
-  readonly errors: readonly Fault[];
-}
+import type { Problem } from "./contract/problem.ts";
 
 /** Exit statuses of the command line (contract section 4). */
 export const exitStatus = { done: 0, failed: 1, refused: 2, shortOfAccuracy: 3 } as const;
@@ -43,6 +33,30 @@ export class UsageError extends Error {
   override readonly name = "UsageError";
 }
 
+/** What a door turns down or cannot do, in its own words: no document is to blame. */
+export class DoorError extends Error {
+  override readonly name = "DoorError";
+  /** Last piece of the problem's type. */
+  readonly code: string;
+  readonly title: string;
+  /** The HTTP status. */
+  readonly status: number;
+  /** Response headers that belong to it, e.g. Allow. */
+  readonly headers: Readonly<Record<string, string>>;
+
+  constructor(status: number, code: string, title: string, detail: string, headers = {}) {
+    super(detail);
+    this.status = status;
+    this.code = code;
+    this.title = title;
+    this.headers = headers;
+  }
+}
+
+/** Why the service could not start, in words. */
+export const notStarted = (detail: string): DoorError =>
+  new DoorError(500, "start", "The service could not start", detail);
+
 /** Errors of Node that mean "no memory left" rather than a mistake of ours. */
 const memoryCodes = new Set(["ERR_WORKER_OUT_OF_MEMORY", "ERR_MEMORY_ALLOCATION_FAILED"]);
 
@@ -51,6 +65,7 @@ export function toFailure(error: unknown): Failure {
   if (error instanceof MappedError) return error.failure;
   if (error instanceof Refusal) return refused(error);
   if (error instanceof UsageError) return misused(error);
+  if (error instanceof DoorError) return failed(error.code, error.title, error.message, error.status);
   if (outOfMemory(error)) {
     return failed(
       "memory",
@@ -93,7 +108,7 @@ function refused(refusal: Refusal): Failure {
     title,
     status: unparsable ? 400 : 422,
     detail: count === 1 ? refusal.faults[0]!.detail : `${count} faults, listed in errors`,
-    errors: refusal.faults,
+    errors: [...refusal.faults],
   };
   return {
     problem,
@@ -109,7 +124,7 @@ function faultLine(fault: Fault): string {
   return `  ${where}${fault.detail}${instead}`;
 }
 
-function failed(code: string, title: string, detail: string): Failure {
-  const problem = { type: `urn:emberturn:problem:${code}`, title, status: 500, detail, errors: [] };
+function failed(code: string, title: string, detail: string, status = 500): Failure {
+  const problem = { type: `urn:emberturn:problem:${code}`, title, status, detail, errors: [] };
   return { problem, exit: exitStatus.failed, words: `${title}: ${detail}` };
 }

@@ -1,13 +1,14 @@
 /** The `emberturn` command: its words, its options, its exit statuses, and what happens when a pipe breaks or a key stops it. */
 import { Command, CommanderError } from "commander";
 import { version } from "../../package.json";
+import { defaults, type ServeOptions } from "../config.ts";
 import { exitStatus, type Failure, toFailure, UsageError } from "../errors.ts";
 import { printable } from "../format/sentence.ts";
 import { type SolveOptions, solveCommand } from "./solve.ts";
 
 /** Runs one command line and sets the process's exit status; `entry` is the bundle to start threads from. */
 export async function runProgram(args: readonly string[], entry: URL): Promise<void> {
-  catchSignals();
+  catchBrokenPipes();
   const json = args.includes("--json");
   try {
     await commands(entry).parseAsync(args, { from: "user" });
@@ -31,10 +32,14 @@ function complain({ problem, words, exit }: Failure, json: boolean): void {
   process.exitCode = exit;
 }
 
-/** Ends at once when stopped, quietly when nobody reads any more, and in words whatever else happens. */
-function catchSignals(): void {
+/** Ends at once when stopped. The service has something to put in order first, and does so itself. */
+function endOnSignals(): void {
   process.on("SIGINT", () => process.exit(130));
   process.on("SIGTERM", () => process.exit(143));
+}
+
+/** Ends quietly when nobody reads any more. */
+function catchBrokenPipes(): void {
   for (const stream of [process.stdout, process.stderr]) {
     stream.on("error", (error: NodeJS.ErrnoException) => {
       if (error.code === "EPIPE") process.exit(process.exitCode ?? exitStatus.done);
@@ -62,6 +67,25 @@ function commands(entry: URL): Command {
       "after",
       "\nExit status: 0 done; 2 the document is refused; 3 solved, but short of accuracyPercent; 1 anything else.",
     )
-    .action((design: string, options: SolveOptions) => solveCommand(design, options, entry));
+    .action((design: string, options: SolveOptions) => {
+      endOnSignals();
+      return solveCommand(design, options, entry);
+    });
+  program
+    .command("serve")
+    .description("Start the service with its page in the browser.")
+    .option("--port <number>", "port to listen on; 0 takes any free one", String(defaults.port))
+    .option("--host <address>", "address to listen on; this machine alone for now", defaults.host)
+    .option("--data <folder>", "folder of the store, made if it is not there", defaults.data)
+    .option("--demo <design>", "solve this design at the first start, and print its figures at every start")
+    .addHelpText(
+      "after",
+      "\nEMBERTURN_LOG=silent | error | warn | info | debug says what is told on stderr (default warn).\nSIGINT and SIGTERM end it; what is not done by then is done after the next start.",
+    )
+    .action(async (options: ServeOptions) => {
+      // Read only here: a single solve starts without the service's libraries.
+      const { serveCommand } = await import("./serve.ts");
+      await serveCommand(options, entry);
+    });
   return program;
 }

@@ -4,6 +4,7 @@ import { access, stat, writeFile } from "node:fs/promises";
 import { dirname } from "node:path";
 import { checkDesign } from "../../meshes/check.ts";
 import { readJson } from "../../meshes/json.ts";
+import { demandNumbers } from "../engine/finite.ts";
 import { solveInThread } from "../engine/thread.ts";
 import { exitStatus, UsageError } from "../errors.ts";
 import { plain } from "../format/figures.ts";
@@ -24,7 +25,7 @@ export async function solveCommand(path: string, options: SolveOptions, entry: U
   const design = checkDesign(readJson(await readText(path, process.stdin)));
   const line = progressLine(process.stderr);
   const { result, heat } = await solveInThread(entry, design, line.report).finally(line.close);
-  demandNumbers(result, "");
+  demandNumbers(result);
   if (options.json) {
     process.stdout.write(`${JSON.stringify(result, null, 2)}\n`);
   } else {
@@ -52,13 +53,4 @@ async function checkWritable(path: string): Promise<void> {
   } catch {
     throw new UsageError(`--picture: ${path} cannot be written`);
   }
-}
-
-/** JSON has no NaN and would print null for it: better to fail than to hand out a hole. */
-function demandNumbers(value: unknown, pointer: string): void {
-  if (typeof value === "number" && !Number.isFinite(value)) {
-    throw new Error(`the result has no number at ${pointer}`);
-  }
-  if (typeof value !== "object" || value === null) return;
-  for (const [key, inner] of Object.entries(value)) demandNumbers(inner, `${pointer}/${key}`);
 }

@@ -23,23 +23,14 @@ export interface Dress {
 }
 
 /** The whole table; ends with a line break. */
-export function renderTable(result: Result, { colour }: Dress): string {
-  const dress = (look: "bold" | "dim", text: string): string =>
-    colour ? styleText(look, text, { validateStream: false }) : text;
-  const title = (text: string): string => dress("bold", text);
-  const quiet = (text: string): string => dress("dim", text);
-  const heading = (words: string): string[] => wrap(printable(words)).map(title);
-  const section = (words: string, lines: readonly string[]): string[] =>
-    lines.length === 0 ? [] : ["", ...heading(words), ...lines];
+export function renderTable(result: Result, dress: Dress): string {
+  const { quiet, section } = dressed(dress);
   const watts = homelyUnit(
     { factor: 1, symbol: "W" },
     result.turns.map((turn) => turn.powerW),
   );
   const lines = [
-    ...heading(result.design.name || "unnamed design"),
-    ...wrap(`${coilSentence(result.design.coil)}; driven with ${driveSentence(result.design.drive)}.`),
-    ...section("AT THE COIL'S TERMINALS", terminalLines(result.empty, result.loaded)),
-    ...section("POWER AND SUPPLY", powerLines(result.power)),
+    ...mainLines(result, dress),
     ...result.parts.flatMap((part, k) =>
       section(`PART: ${part.name || "part"}`, partSection(part, result.design.parts[k])),
     ),
@@ -58,6 +49,33 @@ export function renderTable(result: Result, { colour }: Dress): string {
     ...safety.map(quiet),
   ];
   return `${lines.join("\n")}\n`;
+}
+
+/** Its first two sections: R, L, X and Q of both states, and the powers; ends with a line break. */
+export const renderSummary = (result: Result, dress: Dress): string =>
+  `${mainLines(result, dress).join("\n")}\n`;
+
+function mainLines(result: Result, dress: Dress): string[] {
+  const { heading, section } = dressed(dress);
+  return [
+    ...heading(result.design.name || "unnamed design"),
+    ...wrap(`${coilSentence(result.design.coil)}; driven with ${driveSentence(result.design.drive)}.`),
+    ...section("AT THE COIL'S TERMINALS", terminalLines(result.empty, result.loaded)),
+    ...section("POWER AND SUPPLY", powerLines(result.power)),
+  ];
+}
+
+/** Headings, remarks and sections in the given dress. */
+function dressed({ colour }: Dress) {
+  const put = (look: "bold" | "dim", text: string): string =>
+    colour ? styleText(look, text, { validateStream: false }) : text;
+  const heading = (words: string): string[] => wrap(printable(words)).map((text) => put("bold", text));
+  return {
+    heading,
+    quiet: (text: string): string => put("dim", text),
+    section: (words: string, lines: readonly string[]): string[] =>
+      lines.length === 0 ? [] : ["", ...heading(words), ...lines],
+  };
 }
 
 const safety = wrap(

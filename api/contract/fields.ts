@@ -78,13 +78,13 @@ export interface FieldArray {
   readonly grid: FieldGrid;
 }
 
-/** The array of a quantity; null for the loaded state of a design without parts. The grid is the same in both states. */
+/** The array of a quantity; null for the loaded state of a design without parts. The grid is the same in both states, and there in any case. */
 export function fieldArray(
   fields: Fields,
   quantity: FieldQuantity,
   state: FieldStateName,
 ): FieldArray | null {
-  const values = fields[state];
+  const values = quantity === "grid" ? fields.empty : fields[state];
   if (values === null) return null;
   return { quantity, state, grid: fields.grid, ...valuesOf(fields.grid, values, quantity) };
 }

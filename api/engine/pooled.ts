@@ -1,2 +1,63 @@
-/** What a thread of the service's pool runs. */
-export {};
+/** What a thread of the pool runs: one order in, progress and one outcome out. The thread lives on. */
+import { parentPort } from "node:worker_threads";
+import { gzipSync } from "node:zlib";
+import { checkDesign } from "../../meshes/check.ts";
+import { Cancelled, type Hooks, type Prediction, predict } from "../../meshes/predict.ts";
+import { toFailure } from "../errors.ts";
+import type { Outcome } from "./engine.ts";
+import { demandNumbers } from "./finite.ts";
+import type { Order, Report } from "./pool.ts";
+
+/** Progress is told no oftener than this, ms; a new stage at once. */
+const progressMs = 100;
+
+/** Solved once at the start of a thread, so that what runs hot is compiled before somebody waits for it. */
+const warmUpDesign = {
+  coil: {
+    conductor: { section: "roundTube", outsideDiameterMm: 8, wallMm: 1, material: "copper" },
+    winding: { form: "helix", boreDiameterMm: 42, turns: 2, pitchMm: 11 },
+  },
+  parts: [
+    { name: "warm-up", shape: "cylinder", diameterMm: 28, lengthMm: 40, material: { resistivityOhmM: 3e-7 } },
+  ],
+  drive: { frequencyHz: 8000, currentA: 100 },
+  accuracyPercent: 1,
+};
+
+/** Runs an order; null is the order to warm up. */
+export default function perform(order: Order | null): Outcome {
+  try {
+    if (order === null) return packed(predict(checkDesign(warmUpDesign)));
+    return packed(predict(checkDesign(order.task.document), hooksOf(order)));
+  } catch (error) {
+    if (error instanceof Cancelled) return { state: "stopped" };
+    return { state: "failed", problem: toFailure(error).problem };
+  }
+}
+
+function hooksOf({ run, stop }: Order): Hooks {
+  let last = Number.NEGATIVE_INFINITY;
+  let lastStage = "";
+  return {
+    progress(progress) {
+      const now = performance.now();
+      if (now - last < progressMs && progress.stage === lastStage) return;
+      last = now;
+      lastStage = progress.stage;
+      const report: Report = { run, progress };
+      parentPort?.postMessage(report);
+    },
+    signal: {
+      get aborted() {
+        return Atomics.load(stop, 0) === 1;
+      },
+    },
+    peakMemoryBytes: () => 1024 * process.resourceUsage().maxRSS,
+  };
+}
+
+/** Compressed here and not in the service's own thread, which has requests to answer. */
+function packed({ result }: Prediction): Outcome {
+  demandNumbers(result);
+  return { state: "done", result: JSON.stringify(result), heat: gzipSync(new Uint8Array(0), { level: 1 }) };
+}
