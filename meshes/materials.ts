@@ -73,6 +73,8 @@ function completed<M extends Magnetic>(m: M): M {
 
 const magnetic = { relativePermeability, saturationT, curve };
 const libraryId = z.enum(materialIds as [string, ...string[]]);
+/** The ids a document may name, for those who offer a choice of them. */
+export const libraryIds: readonly string[] = materialIds;
 
 /** The conductor's inline material has to conduct. */
 const inlineConductor = z.strictObject({ resistivityOhmM, ...magnetic });
