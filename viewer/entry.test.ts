@@ -1,7 +1,8 @@
-import * as fc from "fast-check";
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import {
   numberIn,
+  type Quantity,
   quantities as q,
   readEntry,
   readList,
@@ -56,7 +57,7 @@ describe("a blank's entry", () => {
   });
 
   it("comes back as it was shown (seed 71)", () => {
-    const all = Object.values(q);
+    const all: readonly Quantity[] = Object.values(q);
     fc.assert(
       fc.property(fc.double({ min: 1e-3, max: 1e4 }), fc.constantFrom(...all), (x, quantity) => {
         const value = Number(x.toPrecision(6));
@@ -77,7 +78,7 @@ describe("arrow keys", () => {
   });
 
   it("never take a positive quantity to nothing", () => {
-    for (const quantity of [q.wall, q.size, q.frequency, q.current, q.count]) {
+    for (const quantity of [q.wall, q.size, q.frequency, q.current, q.count] as readonly Quantity[]) {
       let value = 3 * (quantity.units[quantity.unit] ?? 1);
       for (let i = 0; i < 60; i++) value = stepped(value, -1, quantity);
       expect(value).toBeGreaterThan(0);

@@ -1,0 +1,1 @@
+export function HalfSection() { return <p>soon</p>; }
