@@ -5,7 +5,7 @@ import { ended, type Job } from "../api/contract/job.ts";
 import type { Problem } from "../api/contract/problem.ts";
 import type { Result } from "../meshes/result.ts";
 import * as client from "./client.ts";
-import type { Heat } from "./heat.ts";
+import { type Heat, heatOf } from "./heat.ts";
 import { draft, verdict } from "./state.ts";
 
 /** What was solved, and what came of it. */
@@ -105,7 +105,7 @@ async function arrived({ id, state }: Job): Promise<void> {
 
 async function load(id: string): Promise<Answer> {
   const [result, bytes] = await Promise.all([client.resultOf(id), client.heatBytesOf(id)]);
-  return { id, result, heat: decodeHeat(bytes) };
+  return { id, result, heat: heatOf(decodeHeat(bytes)) };
 }
 
 /** Solves the draft as it stands; does nothing while it is refused. */
