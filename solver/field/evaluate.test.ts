@@ -1,6 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { tensorPatches } from "../grid/patches.ts";
+import { makePatchMesh, tensorPatches } from "../grid/patches.ts";
 import { makeProbe } from "./evaluate.ts";
 import {
   AIR,
@@ -45,6 +45,44 @@ describe("the locator", () => {
       }),
       { seed: 17, numRuns: 300 },
     );
+  });
+
+  it("does not take for inside a cell what its map, folded beyond its edges, never reaches", () => {
+    const points = [
+      [46.6, 15],
+      [49.9, 17.1],
+      [49.7, 19.8],
+      [46.6, 21.3],
+      [53.9, 17.2],
+      [49.3, 22.6],
+    ];
+    const mesh = makePatchMesh(
+      Float64Array.from(points, ([r]) => r),
+      Float64Array.from(points, ([, z]) => z),
+      Int32Array.of(0, 1, 2, 3, 4, 5, 2, 1),
+      new Int32Array(2),
+      [],
+      null,
+    );
+    const { grid } = prepared(mesh, 1, [-1]);
+    const locate = makeLocator(prepared(mesh, 1, [-1]));
+    const shape = emptyTable(1);
+    let found = 0;
+    for (let k = 0; k < 90_000; k++) {
+      const [r, z] = [46 + 0.03 * (k % 300), 14 + 0.03 * Math.floor(k / 300)];
+      const place = locate(r, z);
+      if (place === null) continue;
+      found++;
+      shapeAt(0, place.xi, place.eta, shape);
+      let [s, height] = [-r * r, -z];
+      for (let i = 0; i < NODES; i++) {
+        const node = grid.cellNodes[place.cell * NODES + i];
+        s += shape.n[i] * grid.r[node] ** 2;
+        height += shape.n[i] * grid.z[node];
+      }
+      expect(Math.hypot(s / r, height)).toBeLessThan(1e-6);
+    }
+    expect(found).toBeGreaterThan(20_000);
   });
 
   it("finds nothing outside", () => {

@@ -19,8 +19,9 @@ export type Locator = (r: number, z: number) => Place | null;
 /** Boxes grow by this part of their size, so that bulging edges and rounding lose no point. */
 const GROWTH = 0.05;
 const STEPS = 40;
-/** A place counts as found this near to it in (ξ, η); as inside a cell this far beyond its edges. */
+/** A place counts as found this near to it in (ξ, η), at the least this near where a map is nearly singular; as inside a cell this far beyond its edges. */
 const EXACT = 1e-12;
+const SETTLED = 1e-6;
 const INSIDE = 1e-9;
 /** Beyond the edges of all candidates, the nearest still serves up to here: arcs and their neighbours' chords differ that much. */
 const TOLERATED = 0.02;
@@ -138,6 +139,7 @@ function invert(
   let xi = 0;
   let eta = 0;
   let atLimit = 0;
+  let moved = Infinity;
   for (let step = 0; step < STEPS; step++) {
     shapeAt(kind, xi, eta, SHAPE);
     let es = -s;
@@ -162,9 +164,11 @@ function invert(
     const dEta = (ez * sXi - es * zXi) / det;
     xi = Math.min(LIMIT, Math.max(-LIMIT, xi - dXi));
     eta = Math.min(LIMIT, Math.max(-LIMIT, eta - dEta));
-    if (Math.abs(dXi) + Math.abs(dEta) < EXACT) break;
+    moved = Math.abs(dXi) + Math.abs(dEta);
+    if (moved < EXACT) break;
     atLimit = Math.max(Math.abs(xi), Math.abs(eta)) === LIMIT ? atLimit + 1 : 0;
     if (atLimit === PATIENCE) break;
   }
-  return { cell, xi, eta };
+  // Beyond its edges a map may fold, and the iteration wander about inside for ever.
+  return moved < SETTLED ? { cell, xi, eta } : { cell, xi: LIMIT, eta: LIMIT };
 }
