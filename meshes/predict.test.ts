@@ -112,6 +112,20 @@ describe("predict", () => {
     expect(empty.power.efficiency).toEqual({ value: 0, plusMinus: 0 });
   });
 
+  it("carries fields when asked to, whose power is the result's without the leads'", () => {
+    expect(predict(checkDesign({ ...draft, parts: [] })).fields).toBeUndefined();
+    const { result, fields } = predict(checkDesign(draft), { fields: true });
+    if (fields?.loaded === undefined || fields.loaded === null) throw new Error("no fields");
+    const { nr, nz, r, z } = fields.grid;
+    const watts = fields.loaded.powerDensity.reduce((sum, p, c) => {
+      const [i, k] = [Math.floor(c / (nz - 1)), c % (nz - 1)];
+      const [r0, r1] = [r[i * nz] ?? 0, r[(i + 1) * nz] ?? 0];
+      return sum + p * Math.PI * (r1 ** 2 - r0 ** 2) * ((z[k + 1] ?? 0) - (z[k] ?? 0));
+    }, 0);
+    expect(nr * nz).toBe(r.length);
+    near(watts, result.power.totalW.value, 1e-9);
+  });
+
   it("stops when asked to", () => {
     const signal = { aborted: false };
     const progress = (): void => {
