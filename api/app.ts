@@ -6,6 +6,8 @@ import { pinoHttp } from "pino-http";
 import { nothingHere, problemHandler } from "./routes/door.ts";
 import { healthRoutes, notReady } from "./routes/health.ts";
 import { jobRoutes } from "./routes/jobs.ts";
+import { materialRoutes } from "./routes/materials.ts";
+import { openApiRoutes } from "./routes/openapi.ts";
 import { pageRoutes } from "./routes/page.ts";
 import type { Service } from "./routes/service.ts";
 
@@ -17,6 +19,8 @@ export function buildApp(service: Service): Express {
   const router = express.Router({ caseSensitive: true, strict: true });
   healthRoutes(router, service);
   jobRoutes(router, service);
+  materialRoutes(router);
+  openApiRoutes(router);
   pageRoutes(router, service);
   app.use(router);
   app.use(nothingHere);

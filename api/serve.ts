@@ -4,6 +4,7 @@ import type { AddressInfo } from "node:net";
 import { destination, type Logger, pino } from "pino";
 import { buildApp } from "./app.ts";
 import type { Settings } from "./config.ts";
+import { formsThread } from "./engine/forms.ts";
 import { threadPool } from "./engine/pool.ts";
 import { notStarted } from "./errors.ts";
 import { JobEvents } from "./jobs/events.ts";
@@ -33,8 +34,10 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
   const store = await openStore(settings.data);
   const again = await store.requeueRunning();
   if (again > 0) log.info({ jobs: again }, "jobs of the last run are run again");
+  const threads = new URL("pooled.mjs", entry);
+  const forms = formsThread(threads);
   const engine = threadPool({
-    entry: new URL("pooled.mjs", entry),
+    entry: threads,
     threads: settings.workers,
     heapMb: settings.workerHeapMb,
     graceMs: settings.graceMs,
@@ -47,6 +50,7 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
     settings,
     jobs,
     events,
+    forms,
     log,
     viewer: new URL("viewer/", entry),
     ready: () => state === "up",
@@ -56,7 +60,7 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
   try {
     await listening(server, settings);
   } catch (error) {
-    await engine.close();
+    await Promise.all([engine.close(), forms.close()]);
     await store.close();
     throw error;
   }
@@ -71,7 +75,7 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
     await runner.close();
     server.closeAllConnections();
     await closed;
-    await engine.close();
+    await Promise.all([engine.close(), forms.close()]);
     await store.close();
   }
 

@@ -22,8 +22,10 @@ export interface TaskProgress {
 export interface Solved {
   /** The result document, JSON text. */
   readonly result: string;
-  /** The heat picture of api/contract/heat.ts, compressed by gzip. */
+  /** The heat file (api/contract/heat.ts), compressed by gzip. */
   readonly heat: Uint8Array;
+  /** The fields' file (api/contract/stored-fields.ts), compressed by gzip. */
+  readonly fields: Uint8Array;
 }
 
 /** How a task ended. Nothing is thrown for a task: what it could not do is told. */

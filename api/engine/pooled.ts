@@ -3,10 +3,14 @@ import { parentPort } from "node:worker_threads";
 import { gzipSync } from "node:zlib";
 import { checkDesign } from "../../meshes/check.ts";
 import { Cancelled, type Hooks, type Prediction, predict } from "../../meshes/predict.ts";
+import { encodeHeat } from "../contract/heat.ts";
+import { encodeFields } from "../contract/stored-fields.ts";
 import { toFailure } from "../errors.ts";
 import type { Outcome } from "./engine.ts";
 import { demandNumbers } from "./finite.ts";
 import type { Order, Report } from "./pool.ts";
+
+export { formed } from "./formed.ts";
 
 /** Progress is told no oftener than this, ms; a new stage at once. */
 const progressMs = 100;
@@ -27,7 +31,7 @@ const warmUpDesign = {
 /** Runs an order; null is the order to warm up. */
 export default function perform(order: Order | null): Outcome {
   try {
-    if (order === null) return packed(predict(checkDesign(warmUpDesign)));
+    if (order === null) return packed(predict(checkDesign(warmUpDesign), { fields: true }));
     return packed(predict(checkDesign(order.task.document), hooksOf(order)));
   } catch (error) {
     if (error instanceof Cancelled) return { state: "stopped" };
@@ -39,6 +43,7 @@ function hooksOf({ run, stop }: Order): Hooks {
   let last = Number.NEGATIVE_INFINITY;
   let lastStage = "";
   return {
+    fields: true,
     progress(progress) {
       const now = performance.now();
       if (now - last < progressMs && progress.stage === lastStage) return;
@@ -57,7 +62,16 @@ function hooksOf({ run, stop }: Order): Hooks {
 }
 
 /** Compressed here and not in the service's own thread, which has requests to answer. */
-function packed({ result }: Prediction): Outcome {
+function packed({ result, heat, fields }: Prediction): Outcome {
   demandNumbers(result);
-  return { state: "done", result: JSON.stringify(result), heat: gzipSync(new Uint8Array(0), { level: 1 }) };
+  if (fields === undefined) throw new Error("the solver told no fields");
+  return {
+    state: "done",
+    result: JSON.stringify(result),
+    heat: zipped(encodeHeat(heat)),
+    fields: zipped(encodeFields(fields)),
+  };
 }
+
+/** Level 1: a third of the size goes, and no higher level takes more than another hundredth. */
+const zipped = (bytes: Uint8Array): Uint8Array => gzipSync(bytes, { level: 1 });

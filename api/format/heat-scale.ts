@@ -1,5 +1,5 @@
 /** Which power densities get which colours: the range, log or linear, and the marks beside the legend. */
-import type { HeatMap } from "../../meshes/heatmap.ts";
+import type { Outline } from "../../meshes/heatmap.ts";
 
 /** A colour scale in W/m³. */
 export interface HeatScale {
@@ -9,11 +9,19 @@ export interface HeatScale {
   readonly high: number;
 }
 
+/** A heat map of any width of numbers. */
+interface Cells {
+  readonly corners: ArrayLike<number>;
+  readonly density: ArrayLike<number>;
+  readonly outline: ArrayLike<number>;
+  readonly outlines: readonly Outline[];
+}
+
 /** Decades that a logarithmic scale spans. */
 const decades = 3;
 
 /** Volume of a ring of quadrilateral section over 2π, m³: area times its centroid's radius, by the shoelace formula. */
-export function ringVolume(corners: Float64Array, cell: number): number {
+export function ringVolume(corners: ArrayLike<number>, cell: number): number {
   let sum = 0;
   for (let k = 0; k < 4; k++) {
     const i = 8 * cell + 2 * k;
@@ -29,7 +37,7 @@ export function ringVolume(corners: Float64Array, cell: number): number {
  * not darken all the rest. Logarithmic when less than a third of the volume lies above a twentieth of the top (a thin hot
  * skin), else linear from 0. Null when nothing is heated.
  */
-export function scaleFor({ corners, density, outline, outlines }: HeatMap): HeatScale | null {
+export function scaleFor({ corners, density, outline, outlines }: Cells): HeatScale | null {
   const coloured = outlines.map(({ role }) => role !== "guide");
   const cells = Array.from(density, (value, k) => ({ value, volume: ringVolume(corners, k), k }))
     .filter(({ value, k }) => value > 0 && coloured[outline[k]!])

@@ -57,6 +57,7 @@ export function jobsOf(store: Store, events: JobEvents, runner: Runner) {
 
     result: (id: string): Promise<string> => leftBehind(id, store.result),
     heat: (id: string): Promise<Buffer> => leftBehind(id, store.heat),
+    fields: (id: string): Promise<Buffer> => leftBehind(id, store.fields),
 
     /** Cancels a live job, then the job; removes an ended one, then null. */
     async end(id: string): Promise<Job | null> {

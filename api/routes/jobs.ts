@@ -9,6 +9,7 @@ import type { Page } from "../store/store.ts";
 import { bodyReader } from "./body.ts";
 import { accepted, door, sendJson } from "./door.ts";
 import { streamEvents } from "./events.ts";
+import { fieldRoutes } from "./fields.ts";
 import type { Service } from "./service.ts";
 
 const unzipped = promisify(gunzip);
@@ -57,6 +58,7 @@ export function jobRoutes(router: Router, service: Service): void {
       await sendZipped(request, response, await jobs.heat(idOf(request)));
     },
   });
+  fieldRoutes(router, service);
 }
 
 /** Sends stored bytes as they lie there where the client unpacks them itself. */
@@ -66,7 +68,7 @@ async function sendZipped(request: Request, response: Response, bytes: Buffer): 
   else response.send(await unzipped(bytes));
 }
 
-export const idOf = (request: Request): string => String(request.params["id"]);
+const idOf = (request: Request): string => String(request.params["id"]);
 
 const PageSchema = z.object({
   limit: z.coerce.number().int().min(1).max(200).default(50),

@@ -39,11 +39,11 @@ function held(folder: string, file: string): Database.Database {
     database = new Database(file, { timeout: patience });
     // Set before the file is first read: from then on the lock is kept, and no second service gets in.
     database.pragma("locking_mode = EXCLUSIVE");
-    refuseForeign(database, file);
+    const fresh = checkedIdentity(database, file) === 0;
     database.pragma("journal_mode = WAL");
     database.pragma("synchronous = FULL");
     database.pragma("foreign_keys = ON");
-    database.pragma(`application_id = ${APPLICATION_ID}`);
+    if (fresh) database.pragma(`application_id = ${APPLICATION_ID}`);
     return database;
   } catch (error) {
     database?.close();
@@ -57,8 +57,9 @@ function refuseBeheaded(file: string): void {
   if (size(file) === 0 && (size(`${file}-wal`) ?? 0) > 0) throw damaged(file, "it is empty");
 }
 
-function refuseForeign(database: Database.Database, file: string): void {
-  const id = database.pragma("application_id", { simple: true });
+/** Whose the file is: 0 nobody's yet, else ours. */
+function checkedIdentity(database: Database.Database, file: string): number {
+  const id = Number(database.pragma("application_id", { simple: true }));
   const tables = database.prepare("select count(*) from sqlite_master").pluck().get();
   if (id !== APPLICATION_ID && (id !== 0 || tables !== 0)) {
     throw notStarted(
@@ -67,6 +68,7 @@ function refuseForeign(database: Database.Database, file: string): void {
   }
   const found = database.pragma("quick_check(1)", { simple: true });
   if (found !== "ok") throw damaged(file, String(found));
+  return id;
 }
 
 function damaged(file: string, how: string): DoorError {

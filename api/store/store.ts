@@ -55,7 +55,7 @@ export async function openStore(folder: string): Promise<Store> {
 
 function storeOn(db: Kysely<Tables>) {
   const find = (id: string) => db.selectFrom("jobs").where("id", "=", id);
-  /** Column of the result of job `id`, undefined before there is one. */
+  /** What job `id` left behind; no row before there is something. */
   const resultOf = (id: string) =>
     db.selectFrom("results").innerJoin("jobs", "jobs.seq", "results.seq").where("jobs.id", "=", id);
 
@@ -113,6 +113,10 @@ function storeOn(db: Kysely<Tables>) {
     heat: async (id: string): Promise<Buffer | undefined> =>
       (await resultOf(id).select("results.heat").executeTakeFirst())?.heat,
 
+    /** Compressed by gzip. */
+    fields: async (id: string): Promise<Buffer | undefined> =>
+      (await resultOf(id).select("results.fields").executeTakeFirst())?.fields,
+
     /** Puts what an earlier run of the service left running back into the queue; how many these were. */
     async requeueRunning(): Promise<number> {
       const done = await db
@@ -139,7 +143,7 @@ function storeOn(db: Kysely<Tables>) {
     },
 
     /** Stores the result and ends the job in one; undefined, and nothing stored, when the job runs no more. */
-    finish(seq: number, { result, heat }: Solved): Promise<JobRow | undefined> {
+    finish(seq: number, { result, heat, fields }: Solved): Promise<JobRow | undefined> {
       return db.transaction().execute(async (trx) => {
         const job = await trx
           .updateTable("jobs")
@@ -151,7 +155,7 @@ function storeOn(db: Kysely<Tables>) {
         if (job === undefined) return undefined;
         await trx
           .insertInto("results")
-          .values({ seq, result, heat: Buffer.from(heat) })
+          .values({ seq, result, heat: Buffer.from(heat), fields: Buffer.from(fields) })
           .execute();
         return job;
       });

@@ -36,6 +36,8 @@ interface ResultTable {
   readonly result: string;
   /** Compressed by gzip. */
   readonly heat: Buffer;
+  /** Compressed by gzip. */
+  readonly fields: Buffer;
 }
 
 export type JobRow = Omit<Selectable<JobTable>, "document" | "client_key" | "fingerprint">;
@@ -68,6 +70,7 @@ const first: Migration = {
       .addColumn("seq", "integer", (c) => c.primaryKey().references("jobs.seq").onDelete("cascade"))
       .addColumn("result", "text", (c) => c.notNull())
       .addColumn("heat", "blob", (c) => c.notNull())
+      .addColumn("fields", "blob", (c) => c.notNull())
       .execute();
   },
 };
