@@ -1,4 +1,5 @@
 /** The heat picture as the page holds it: cells of the half-section with their power density, and the outlines of the bodies. */
+import type { HeatFile } from "../api/contract/heat.ts";
 import type { Outline } from "../meshes/heatmap.ts";
 
 /** Power density in the heated copper and parts of one state; what `HeatMap` says, in whatever width it came over the wire. */
@@ -10,6 +11,17 @@ export interface Heat {
   /** The index in `outlines` of (one of) its body's outlines, one number a cell. */
   readonly outline: Uint16Array | Uint32Array | Int32Array;
   readonly outlines: readonly Outline[];
+}
+
+/** The heat of a file, whose cells share their corners, with every cell's own corners side by side. */
+export function heatOf({ points, cells, density, outline, outlines }: HeatFile): Heat {
+  const corners = new Float32Array(2 * cells.length);
+  for (let k = 0; k < cells.length; k++) {
+    const from = 2 * cells[k]!;
+    corners[2 * k] = points[from]!;
+    corners[2 * k + 1] = points[from + 1]!;
+  }
+  return { corners, density, outline, outlines };
 }
 
 /** A box in the half-section, m. */

@@ -26,7 +26,7 @@ const slack = 1e-3;
 export function rasterCells(
   corners: Heat["corners"],
   window: Window,
-  ids = new Int32Array(window.width * window.height),
+  ids: Int32Array = new Int32Array(window.width * window.height),
 ): Int32Array {
   ids.fill(none);
   const { left, top, step, width } = window;
