@@ -70,6 +70,18 @@ describe("the heat file", () => {
     expect(file.outlines[1]?.points.length).toBe(4);
   });
 
+  it("takes no two places for one, however far apart in z and near in r", () => {
+    const grain = 2 ** -24;
+    const cells = Array.from({ length: 26 }, (_, s) => [0, 1, grain, 1 - 2 ** s * grain, 1, 1, 0, 1]);
+    const heat: HeatMap = {
+      corners: Float64Array.from(cells.flat()),
+      density: new Float64Array(26),
+      outline: new Int32Array(26),
+      outlines: [],
+    };
+    expect(decodeHeat(encodeHeat(heat).buffer).points.length / 2).toBe(2 + 26);
+  });
+
   it("counts corners in 16 bits as long as that is enough", () => {
     expect(decodeHeat(encodeHeat(strip(600)).buffer).cells).toBeInstanceOf(Uint16Array);
     const large = decodeHeat(encodeHeat(strip(70_000)).buffer);
