@@ -3,11 +3,9 @@ import compression from "compression";
 import express, { type Express, type RequestHandler } from "express";
 import helmet from "helmet";
 import { pinoHttp } from "pino-http";
+import { apiRoutes } from "./routes/api.ts";
 import { nothingHere, problemHandler } from "./routes/door.ts";
-import { healthRoutes, notReady } from "./routes/health.ts";
-import { jobRoutes } from "./routes/jobs.ts";
-import { materialRoutes } from "./routes/materials.ts";
-import { openApiRoutes } from "./routes/openapi.ts";
+import { notReady } from "./routes/health.ts";
 import { pageRoutes } from "./routes/page.ts";
 import type { Service } from "./routes/service.ts";
 
@@ -17,10 +15,7 @@ export function buildApp(service: Service): Express {
   app.set("query parser", "simple");
   app.use(requestLog(service), securityHeaders, compress, refuseWhileClosing(service), freshness);
   const router = express.Router({ caseSensitive: true, strict: true });
-  healthRoutes(router, service);
-  jobRoutes(router, service);
-  materialRoutes(router);
-  openApiRoutes(router);
+  apiRoutes(router, service);
   pageRoutes(router, service);
   app.use(router);
   app.use(nothingHere);

@@ -39,17 +39,19 @@ export function ringVolume(corners: ArrayLike<number>, cell: number): number {
  */
 export function scaleFor({ corners, density, outline, outlines }: Cells): HeatScale | null {
   const coloured = outlines.map(({ role }) => role !== "guide");
-  const cells = Array.from(density, (value, k) => ({ value, volume: ringVolume(corners, k), k }))
-    .filter(({ value, k }) => value > 0 && coloured[outline[k]!])
-    .sort((a, b) => b.value - a.value);
-  const total = cells.reduce((sum, { volume }) => sum + volume, 0);
+  const cells = Uint32Array.from(density, (_, k) => k)
+    .filter((k) => density[k]! > 0 && coloured[outline[k]!])
+    .sort((a, b) => density[b]! - density[a]!);
+  const volumes = Float64Array.from(cells, (k) => ringVolume(corners, k));
+  const total = volumes.reduce((sum, volume) => sum + volume, 0);
   if (total === 0) return null;
   let above = 0;
-  const high = cells.find(({ volume }) => {
+  const at = volumes.findIndex((volume) => {
     above += volume;
     return above >= 1e-3 * total;
-  })!.value;
-  const warm = cells.reduce((sum, { value, volume }) => sum + (value > high / 20 ? volume : 0), 0);
+  });
+  const high = density[cells[at]!]!;
+  const warm = volumes.reduce((sum, volume, i) => sum + (density[cells[i]!]! > high / 20 ? volume : 0), 0);
   return warm < total / 3
     ? { kind: "log", low: high / 10 ** decades, high }
     : { kind: "linear", low: 0, high };

@@ -87,7 +87,7 @@ function inWords(error: unknown, folder: string, file: string): unknown {
   }
   if (/^SQLITE_(CORRUPT|NOTADB)/.test(code)) return damaged(file, (error as Error).message);
   if (/^SQLITE_FULL|ENOSPC/.test(code)) return notStarted(`There is no room left on the disk of ${folder}.`);
-  if (/^(SQLITE_(CANTOPEN|READONLY|IOERR|PERM)|EACCES|EROFS|EPERM|ENOTDIR|EEXIST|EISDIR)/.test(code)) {
+  if (/^(SQLITE_(CANTOPEN|READONLY|IOERR|PERM)|EACCES|EROFS|EPERM|ENOTDIR|ENOENT|EEXIST|EISDIR)/.test(code)) {
     return notStarted(`The data folder ${folder} cannot be written (${code}). Choose another one by --data.`);
   }
   return error;
