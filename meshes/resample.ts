@@ -14,7 +14,7 @@ import type { Scene } from "./scene.ts";
 /** Nodes on a surface are read this far inside it, in the arrangement's half-size: far above rounding, far below any cell. */
 const INSIDE = 1e-8;
 /** A state is cut into about so many pieces, each cell alike, into at most so many along. */
-const PIECES = 16_000;
+const PIECES = 8_000;
 const MOST_ALONG = 4;
 
 /** Both states of an answer at `current` A through the coil. Throws SolverError where a node lies in no cell. */
