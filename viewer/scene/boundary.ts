@@ -21,8 +21,9 @@ export function boundaryOf({ corners }: Pick<Heat, "corners">): Boundary {
   const axis = size * grain;
   const found: number[] = [];
   for (let k = 0; k < count; k++) {
+    if (single[k] === 0) continue;
     const [r0, , r1] = ends(corners, k);
-    if (single[k] === 1 && (r0 > axis || r1 > axis)) found.push(k);
+    if (r0 > axis || r1 > axis) found.push(k);
   }
   const edges = new Float64Array(4 * found.length);
   found.forEach((k, i) => {
@@ -54,10 +55,14 @@ function area(corners: Heat["corners"], cell: number): number {
 /** A whole number an edge, the same for both cells that share it: its ends' sum, which does not know their order. */
 function edgeKeys(corners: Heat["corners"], size: number): Float64Array {
   const scale = 1 / (size * grain);
-  return Float64Array.from({ length: corners.length / 2 }, (_, k) => {
-    const [r0, z0, r1, z1] = ends(corners, k);
-    return Math.round((r0 + r1) * scale) * 2 ** 24 + Math.round((z0 + z1) * scale);
-  });
+  const keys = new Float64Array(corners.length / 2);
+  for (let k = 0; k < keys.length; k++) {
+    const next = 2 * ((k & ~3) + ((k + 1) & 3));
+    const r = Math.round((corners[2 * k]! + corners[next]!) * scale);
+    const z = Math.round((corners[2 * k + 1]! + corners[next + 1]!) * scale);
+    keys[k] = r * 2 ** 24 + z;
+  }
+  return keys;
 }
 
 /** 1 where a key is there once, by an open hash table of twice the room. */

@@ -28,7 +28,7 @@ void main() {
   place = uv;
   vec3 n = normalize(normalMatrix * normal);
   float light = max(0.0, dot(n, normalize(vec3(-0.35, 0.5, 0.8))));
-  shade = mix(1.0, 0.64 + 0.36 * light, lit);
+  shade = mix(1.0, 0.74 + 0.26 * light, lit);
   gl_Position = projectionMatrix * modelViewMatrix * vec4(position, 1.0);
 }`;
 const fragmentShader = `
@@ -110,8 +110,11 @@ export function outlineLines(outlines: readonly Outline[], ink: string): LineSeg
     };
     for (const outline of outlines) {
       outline.points.forEach((p, k) => {
+        const q = outline.points[(k + 1) % outline.points.length]!;
+        // The axis is no edge of anything.
+        if (p[0] <= 0 && q[0] <= 0) return;
         put(p);
-        put(outline.points[(k + 1) % outline.points.length]!);
+        put(q);
       });
     }
   }

@@ -54,11 +54,22 @@ export function ballOf({ rMax, zMin, zMax }: Bounds): { middle: number; radius: 
 }
 
 /** The camera for a picture of the aspect width / height. */
-export function cameraOf({ azimuth, elevation, zoom, shift }: Orbit, bounds: Bounds, aspect: number): Camera {
+export function cameraOf(orbit: Orbit, bounds: Bounds, aspect: number): Camera {
+  const { eye, view, projection, distance } = unzoomed(orbit, bounds, aspect);
+  const { shift } = orbit;
+  const zoom = orbit.zoom * fitting(bounds, aspect);
+  // Zooming enlarges the picture about its middle rather than walking into the solid, and the shift moves it.
+  const enlarge = mat4.create();
+  mat4.fromTranslation(enlarge, [(2 * shift[0]) / aspect, 2 * shift[1], 0]);
+  mat4.scale(enlarge, enlarge, [zoom, zoom, 1]);
+  mat4.multiply(projection, enlarge, projection);
+  return { eye, view, projection, span: (2 * distance * Math.tan(fieldOfView / 2)) / zoom };
+}
+
+/** The camera at a distance from which the ball round the solid fits the picture's narrower side. */
+function unzoomed({ azimuth, elevation }: Orbit, bounds: Bounds, aspect: number) {
   const { middle, radius } = ballOf(bounds);
-  const half = fieldOfView / 2;
-  // The ball fits the narrower side.
-  const distance = radius / Math.sin(Math.atan(Math.tan(half) * Math.min(1, aspect)));
+  const distance = radius / Math.sin(Math.atan(Math.tan(fieldOfView / 2) * Math.min(1, aspect)));
   const level = Math.cos(elevation) * distance;
   const eye = vec3.fromValues(
     level * Math.cos(azimuth),
@@ -66,34 +77,27 @@ export function cameraOf({ azimuth, elevation, zoom, shift }: Orbit, bounds: Bou
     level * Math.sin(azimuth),
   );
   const view = mat4.lookAt(mat4.create(), eye, [0, middle, 0], [0, 1, 0]);
-  const projection = mat4.perspective(
-    mat4.create(),
-    fieldOfView,
-    aspect,
-    distance - 1.01 * radius,
-    distance + 1.01 * radius,
-  );
-  // Zooming enlarges the picture about its middle rather than walking into the solid, and the shift moves it.
-  const enlarge = mat4.fromValues(
-    zoom,
-    0,
-    0,
-    0,
-    0,
-    zoom,
-    0,
-    0,
-    0,
-    0,
-    1,
-    0,
-    (2 * shift[0]) / aspect,
-    2 * shift[1],
-    0,
-    1,
-  );
-  mat4.multiply(projection, enlarge, projection);
-  return { eye, view, projection, span: (2 * distance * Math.tan(half)) / zoom };
+  const [near, far] = [distance - 1.01 * radius, distance + 1.01 * radius];
+  const projection = mat4.perspective(mat4.create(), fieldOfView, aspect, near, far);
+  return { eye, view, projection, distance };
+}
+
+/** Share of the picture that the solid fills at first. */
+const filled = 0.94;
+
+/** How many times as large as its ball would allow the solid fits, looked at as at first. */
+function fitting(bounds: Bounds, aspect: number): number {
+  const { view, projection } = unzoomed(atFirst, bounds, aspect);
+  const { rMax, zMin, zMax } = bounds;
+  let most = 0;
+  for (let k = 0; k < 32; k++) {
+    const angle = (k * Math.PI) / 16;
+    for (const z of [zMin, zMax]) {
+      const [x, y] = placeOf({ view, projection }, [rMax * Math.cos(angle), z, rMax * Math.sin(angle)]);
+      most = Math.max(most, Math.abs(x), Math.abs(y));
+    }
+  }
+  return filled / most;
 }
 
 /** The ray from the eye through a place of the picture, x and y from −1 to 1, upwards. */
@@ -104,7 +108,10 @@ export function rayAt({ view, projection, eye }: Camera, x: number, y: number): 
 }
 
 /** Where a point of the solid stands in the picture, x and y from −1 to 1. */
-export function placeOf({ view, projection }: Camera, point: vec3): [number, number] {
+export function placeOf(
+  { view, projection }: Pick<Camera, "view" | "projection">,
+  point: vec3 | [number, number, number],
+): [number, number] {
   const clip = vec3.transformMat4(vec3.create(), point, mat4.multiply(mat4.create(), projection, view));
   return [clip[0], clip[1]];
 }

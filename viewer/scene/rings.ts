@@ -97,20 +97,33 @@ function revolved(pieces: readonly Piece[], steps: number): Rings {
   const turn = Array.from({ length: steps + 1 }, (_, i) => opening.to + (sweep * i) / steps);
   const [cosines, sines] = [turn.map(Math.cos), turn.map(Math.sin)];
   pieces.forEach(({ ends, normals, along, row }, k) => {
-    for (let i = 0; i <= steps; i++) {
-      for (const end of [0, 1] as const) {
-        const vertex = ring * k + 2 * i + end;
-        const [c, s] = [cosines[i]!, sines[i]!];
-        position.set([ends[end][0] * c, ends[end][1], ends[end][0] * s], 3 * vertex);
-        normal.set([normals[end][0] * c, normals[end][1], normals[end][0] * s], 3 * vertex);
-        uv.set([along[end], row], 2 * vertex);
+    for (let i = 0, at = ring * k; i <= steps; i++) {
+      const [c, s] = [cosines[i]!, sines[i]!];
+      for (let end = 0; end < 2; end++, at++) {
+        const [point, out] = [ends[end]!, normals[end]!];
+        position[3 * at] = point[0] * c;
+        position[3 * at + 1] = point[1];
+        position[3 * at + 2] = point[0] * s;
+        normal[3 * at] = out[0] * c;
+        normal[3 * at + 1] = out[1];
+        normal[3 * at + 2] = out[0] * s;
+        uv[2 * at] = along[end]!;
+        uv[2 * at + 1] = row;
       }
-      if (i === steps) continue;
-      const v = ring * k + 2 * i;
-      index.set([v, v + 1, v + 2, v + 1, v + 3, v + 2], 6 * (steps * k + i));
+      if (i < steps) putSquare(index, 6 * (steps * k + i), ring * k + 2 * i);
     }
   });
   return { position, normal, uv, index };
+}
+
+/** Two triangles between four vertices from `v` on. */
+function putSquare(index: Uint32Array, at: number, v: number): void {
+  index[at] = v;
+  index[at + 1] = v + 1;
+  index[at + 2] = v + 2;
+  index[at + 3] = v + 1;
+  index[at + 4] = v + 3;
+  index[at + 5] = v + 2;
 }
 
 /** The colours along every chain, a row each, `columns` wide, packed. */

@@ -5,7 +5,7 @@
  */
 import { Color, type LineSegments, type Mesh, PerspectiveCamera, Scene, WebGLRenderer } from "three";
 import { type Bounds, boundsOf, type Heat } from "../heat.ts";
-import { type Boundary, chainsOf } from "./boundary.ts";
+import { type Boundary, boundaryOf, chainsOf } from "./boundary.ts";
 import { faceMesh, outlineLines, release, surfaceMesh } from "./meshes.ts";
 import { ballOf, type Camera } from "./orbit.ts";
 import { type Paint, plainColour } from "./paint.ts";
@@ -16,7 +16,6 @@ import { visibleWindow } from "./visible.ts";
 /** What is to be shown. */
 export interface Shown {
   readonly heat: Heat;
-  readonly boundary: Boundary;
   readonly paint: Paint;
   /** "#rrggbb" of the ground and of the outlines. */
   readonly paper: string;
@@ -62,20 +61,26 @@ export class Solid {
     this.camera.matrixWorldAutoUpdate = false;
   }
 
-  /** Builds the solid in pieces of work of some ten milliseconds; false when something else was asked for meanwhile. */
-  async show(shown: Shown): Promise<boolean> {
+  /**
+   * Builds the solid in pieces of work of some ten milliseconds. Resolves to its surface, for reading it; null when something
+   * else was asked for meanwhile.
+   */
+  async show(shown: Shown): Promise<Boundary | null> {
     this.asked += 1;
     const ticket = this.asked;
     const bounds = boundsOf(shown.heat.outlines);
     const size = 2 * ballOf(bounds).radius;
-    const chains = chainsOf(shown.boundary);
+    await nextTask();
+    const boundary = boundaryOf(shown.heat);
+    await nextTask();
+    const chains = chainsOf(boundary);
     const table = chainColours(chains, (cell) => plainColour(shown.paint, cell), columns);
     await nextTask();
     const turning = ringsOf(chains, size, triangles.turning);
     await nextTask();
     const rest = ringsOf(chains, size, triangles.rest);
     await nextTask();
-    if (ticket !== this.asked) return false;
+    if (ticket !== this.asked) return null;
     this.clear();
     this.renderer.setClearColor(new Color(shown.paper));
     this.built = {
@@ -88,7 +93,7 @@ export class Solid {
     };
     const { turning: a, rest: b, lines, whole } = this.built;
     this.scene.add(a, b, lines, whole);
-    return true;
+    return boundary;
   }
 
   /** Sets the picture's size, px, and the device pixels to one of them. */

@@ -1,7 +1,7 @@
 /** The cut-away solid: turned, looked into and read by pointer, touch and keys; without WebGL the flat map stands in for it. */
 import { useCallback, useEffect, useMemo, useRef, useState } from "preact/hooks";
 import { boundsOf } from "../../heat.ts";
-import { boundaryOf } from "../../scene/boundary.ts";
+import type { Boundary } from "../../scene/boundary.ts";
 import { atFirst, cameraOf, closer, type Orbit, rayAt, turned } from "../../scene/orbit.ts";
 import { paintOf } from "../../scene/paint.ts";
 import { meet } from "../../scene/pick.ts";
@@ -55,23 +55,22 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
   const [orbit, setOrbit] = useState<Orbit>(atFirst);
   const [moving, setMoving] = useState(false);
   const bounds = useMemo(() => boundsOf(heat.outlines), [heat]);
-  const boundary = useMemo(() => boundaryOf(heat), [heat]);
   const paint = useMemo(() => paintOf(heat, scale, inks.palette), [heat, scale, inks]);
   const camera = useMemo(
     () => cameraOf(orbit, bounds, box.width / Math.max(1, box.height)),
     [orbit, bounds, box],
   );
   const solid = useSolid(canvas, onTrouble);
-  // Counts what was built, so that it is drawn when it is there.
-  const [built, setBuilt] = useState(0);
+  // What was built last: drawn when it is there, and read from.
+  const [built, setBuilt] = useState<Boundary | null>(null);
 
   useEffect(() => {
     void solid
-      ?.show({ heat, boundary, paint, paper: inks.paper, ink: inks.ink })
-      .then((newest) => newest && setBuilt((count) => count + 1));
-  }, [solid, heat, boundary, paint, inks]);
+      ?.show({ heat, paint, paper: inks.paper, ink: inks.ink })
+      .then((surface) => surface !== null && setBuilt(surface));
+  }, [solid, heat, paint, inks]);
   useEffect(() => {
-    if (solid === null || built === 0 || box.width === 0) return;
+    if (solid === null || built === null || box.width === 0) return;
     const frame = requestAnimationFrame(() => {
       solid.resize(box.width, box.height, moving ? 1 : ratioNow());
       solid.draw(camera, moving);
@@ -86,8 +85,9 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
   );
   const rotate = (dx: number, dy: number): void => setOrbit((now) => turned(now, dx, dy));
   const read = (x: number, y: number): Seen | null => {
+    if (built === null) return null;
     const { from, along } = rayAt(camera, (2 * x) / box.width - 1, 1 - (2 * y) / box.height);
-    return meet(heat, boundary, { from, along });
+    return meet(heat, built, { from, along });
   };
 
   return (
@@ -97,7 +97,7 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
       canvas={canvas}
       verb="turn it"
       whole="as at first"
-      waiting={built === 0}
+      waiting={built === null}
       read={read}
       moves={[
         { words: "turn left", act: () => rotate(2 * turn.key, 0) },

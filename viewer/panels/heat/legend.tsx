@@ -1,4 +1,5 @@
 /** What the picture shows in a sentence, and which power density each colour stands for. */
+import { useId } from "preact/hooks";
 import { heatColour } from "../../../api/format/colour.ts";
 import { homelyUnit, plain, plainFigure } from "../../../api/format/figures.ts";
 import { type HeatScale, marks, position } from "../../../api/format/heat-scale.ts";
@@ -12,8 +13,8 @@ export interface LegendProps {
   readonly result: Result;
 }
 
-/** Colours the bar is drawn with, and its size in its own units. */
-const shades = 96;
+/** Colours the bar is blended from, and its size in its own units. */
+const stops = 48;
 const bar = { length: 480, height: 14, left: 14 };
 const width = bar.length + 2 * bar.left;
 
@@ -37,20 +38,19 @@ function shownWords({ power, parts, design }: Result): string {
 function Bar({ scale }: { readonly scale: HeatScale }) {
   const unit = homelyUnit({ factor: 1e6, symbol: "W/cm³" }, [scale.high]);
   const x = (density: number): number => bar.left + bar.length * position(scale, density);
+  const ramp = useId();
   const label = `Colours from dark violet, ${densityWords(scale.low)}, to pale yellow, ${densityWords(scale.high)}`;
   return (
     <>
       <svg viewBox={`0 0 ${width} 40`} role="img" aria-label={label}>
-        {Array.from({ length: shades }, (_, k) => (
-          <rect
-            key={k}
-            x={bar.left + (k * bar.length) / shades}
-            y={0}
-            width={bar.length / shades + (k < shades - 1 ? 0.6 : 0)}
-            height={bar.height}
-            fill={heatColour((k + 0.5) / shades)}
-          />
-        ))}
+        <defs>
+          <linearGradient id={ramp}>
+            {Array.from({ length: stops + 1 }, (_, k) => (
+              <stop key={k} offset={k / stops} stop-color={heatColour(k / stops)} />
+            ))}
+          </linearGradient>
+        </defs>
+        <rect x={bar.left} width={bar.length} height={bar.height} fill={`url(#${ramp})`} />
         {marks(scale).map((density) => (
           <g key={density}>
             <path class="heat-mark" d={`M${x(density)} ${bar.height}v5`} />
@@ -61,14 +61,10 @@ function Bar({ scale }: { readonly scale: HeatScale }) {
         ))}
       </svg>
       <figcaption>
-        Power density, {unit.symbol}, {kindWords(scale)} The brightest colour stands for{" "}
-        {densityWords(scale.high)} and above.
+        Power density, {unit.symbol}, {scale.kind === "log" ? "logarithmic" : "linear from zero"}. The
+        brightest colour stands for {densityWords(scale.high)} and above
+        {scale.kind === "log" ? `, the darkest for ${densityWords(scale.low)} and below.` : "."}
       </figcaption>
     </>
   );
 }
-
-const kindWords = (scale: HeatScale): string =>
-  scale.kind === "log"
-    ? `logarithmic: equal steps of colour are equal factors, the darkest a thousandth of the brightest and all below.`
-    : `linear from zero: equal steps of colour are equal steps of heat.`;

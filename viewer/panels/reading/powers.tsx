@@ -38,7 +38,7 @@ function Split({ power }: { readonly power: Power }) {
         .filter(({ share }) => share > 0)
         .map(({ share, words, tone }) => (
           <span key={tone} class={`split-${tone}`} style={{ flexGrow: String(share) }}>
-            {share > 0.12 ? `${percent(share)} ${words}` : ""}
+            {share > 0.28 ? `${percent(share)} ${words}` : share > 0.09 ? percent(share) : ""}
           </span>
         ))}
     </div>
