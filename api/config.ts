@@ -59,7 +59,7 @@ export function settingsOf(options: ServeOptions, env: NodeJS.ProcessEnv): Setti
     workers: Math.max(1, Math.min(availableParallelism(), mostWorkers, Math.floor(totalmem() / workerBytes))),
     workerHeapMb: 2048,
     bodyBytes: 16e6,
-    graceMs: 1200,
+    graceMs: 1000,
     shutdownMs: 5000,
   };
 }
