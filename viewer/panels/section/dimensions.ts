@@ -14,7 +14,7 @@ export interface Dimension {
   /** Where its extension lines start, across the lane. */
   readonly fromAt: number;
   readonly toAt: number;
-  /** What stands at it, and what a screen reader says. */
+  /** What stands at it, and what it is in full. */
   readonly words: string;
   readonly label: string;
   readonly pointer: string;
@@ -51,16 +51,16 @@ function coilDimensions(copper: Copper): Dimension[] {
   switch (winding.form) {
     case "helix":
       return [
-        boreAt(copper, "boreDiameterMm", "bore", "Bore of the coil"),
+        boreAt(copper, "boreDiameterMm", "bore", "bore of the coil"),
         ...pitches(copper, copper.turns, "right"),
         ...height(copper, "turns"),
       ];
     case "cone": {
       const top = copper.turns.at(-1)!;
       return [
-        boreAt(copper, "topBoreDiameterMm", "top bore", "Bore at the top", top),
+        boreAt(copper, "topBoreDiameterMm", "top bore", "bore at the top", top),
         {
-          ...boreAt(copper, "boreDiameterMm", "bottom bore", "Bore at the bottom", copper.turns[0]!),
+          ...boreAt(copper, "boreDiameterMm", "bottom bore", "bore at the bottom", copper.turns[0]!),
           side: "bottom",
         },
         ...pitches(copper, copper.turns, "right"),
@@ -71,7 +71,7 @@ function coilDimensions(copper: Copper): Dimension[] {
       const last = copper.turns.slice(-winding.turnsPerLayer);
       const firsts = copper.turns.filter((_, k) => k % winding.turnsPerLayer === winding.turnsPerLayer - 1);
       return [
-        boreAt(copper, "boreDiameterMm", "bore", "Bore of the coil"),
+        boreAt(copper, "boreDiameterMm", "bore", "bore of the coil"),
         ...pitches(copper, last, "right"),
         ...layerPitch(firsts),
         ...height(copper, "turnsPerLayer"),
@@ -79,13 +79,13 @@ function coilDimensions(copper: Copper): Dimension[] {
     }
     case "spiral":
       return [
-        boreAt(copper, "innerDiameterMm", "clear", "Clear inner diameter of the coil"),
+        boreAt(copper, "innerDiameterMm", "clear", "clear inner diameter of the coil"),
         ...pitches(copper, copper.turns, "top"),
         across(copper),
       ];
     case "rings":
       return [
-        { ...boreAt(copper, "centresMm", "bore", "Bore of the coil", innermost(copper.turns)) },
+        { ...boreAt(copper, "centresMm", "bore", "bore of the coil", innermost(copper.turns)) },
         ...height(copper, "centresMm"),
       ];
   }
@@ -110,7 +110,7 @@ function boreAt(
     fromAt: turn.z,
     toAt: turn.z,
     words: `${words} ${mm(2 * r)}`,
-    label: `${label}, ${mm(2 * r)} mm`,
+    label,
     pointer: `${WINDING}/${key}`,
   };
 }
@@ -132,7 +132,7 @@ function pitches(copper: Copper, turns: readonly TurnMm[], side: "right" | "top"
       side,
       ...along,
       words: `${words}${mm(value)}`,
-      label: `Pitch, centre to centre, ${mm(value)} mm`,
+      label: "pitch, centre to centre",
       pointer,
     };
   };
@@ -151,7 +151,7 @@ function layerPitch(uppermost: readonly TurnMm[]): Dimension[] {
       fromAt: a.z,
       toAt: b.z,
       words: `layers ${mm(b.r - a.r)}`,
-      label: `Pitch from layer to layer, ${mm(b.r - a.r)} mm`,
+      label: "pitch from layer to layer",
       pointer: `${WINDING}/layerPitchMm`,
     },
   ];
@@ -169,7 +169,7 @@ function height(copper: Copper, key: string): Dimension[] {
       fromAt: box.right,
       toAt: box.right,
       words: `coil ${value} high`,
-      label: `Height of the coil over its copper, ${value} mm`,
+      label: "height of the coil over its copper",
       pointer: `${WINDING}/${key}`,
     },
   ];
@@ -185,7 +185,7 @@ function across(copper: Copper): Dimension {
     fromAt: outer.z,
     toAt: outer.z,
     words: `coil ${mm(2 * r)} across`,
-    label: `Diameter of the coil over its copper, ${mm(2 * r)} mm`,
+    label: "diameter of the coil over its copper",
     pointer: `${WINDING}/turns`,
   };
 }
@@ -208,14 +208,14 @@ function partDimensions(part: Placed, named: boolean): Dimension[] {
     fromAt: solid.shape === "sphere" ? (box.low + box.high) / 2 : box.low,
     toAt: solid.shape === "sphere" ? (box.low + box.high) / 2 : box.low,
     words: `${who}${words}`,
-    label: `${label} of ${part.label}, ${mm(value)} mm`,
+    label: `${label} of ${part.label}`,
     pointer: key(name),
   });
   const long = mm(box.high - box.low);
   const bore = solid.shape === "cylinder" ? solid.boreDiameterMm : 0;
   return [
-    diameter(2 * box.right, `${mm(2 * box.right)} across`, "Diameter", "diameterMm"),
-    ...(bore > 0 ? [diameter(bore, `bored ${mm(bore)}`, "Bore", "boreDiameterMm")] : []),
+    diameter(2 * box.right, `${mm(2 * box.right)} across`, "diameter", "diameterMm"),
+    ...(bore > 0 ? [diameter(bore, `bored ${mm(bore)}`, "bore", "boreDiameterMm")] : []),
     ...(solid.shape === "sphere" && !stack
       ? []
       : [
@@ -226,7 +226,7 @@ function partDimensions(part: Placed, named: boolean): Dimension[] {
             fromAt: -box.right,
             toAt: -box.right,
             words: `${who}${long} long`,
-            label: `Length of ${part.label}, ${long} mm`,
+            label: `length of ${part.label}`,
             pointer: stack ? `${pointer}/count` : key("lengthMm"),
           } as const,
         ]),
@@ -250,7 +250,7 @@ function gapDimension(gap: Gap, bodies: readonly Placed[]): Dimension {
     fromAt: start,
     toAt: start,
     words: `gap ${about(gap.distance)}`,
-    label: `Gap between the coil and ${placed.label}, ${about(gap.distance)} mm`,
+    label: `gap between the coil and ${placed.label}`,
     pointer: gapPointer(gap, placed),
     segment: [gap.part, gap.copper],
   };

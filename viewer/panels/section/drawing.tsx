@@ -1,11 +1,11 @@
 /** The drawing itself as SVG: both halves, centre line, hatching, turn numbers, names, dimension lines, scale bar. */
 import type { Copper, Layout, Placed } from "../../../meshes/layout.ts";
-import type { Box, Xy } from "../../../meshes/planar.ts";
+import type { Box } from "../../../meshes/planar.ts";
 import { type Figure, figureBox } from "../../../meshes/shapes.ts";
 import { type Arranged, FOOT, type Laid, scaleBarMm, type View, wordsWidth, xOf, yOf } from "./arrange.ts";
 import { mm } from "./dimensions.ts";
 import { placeName } from "./names.ts";
-import { borePath, dimensionPath, pathOf } from "./paths.ts";
+import { borePath, dimensionPath, edgePath, pathOf } from "./paths.ts";
 import type { Refused } from "./refused.ts";
 
 interface Props {
@@ -22,7 +22,6 @@ interface Props {
 export function Drawing({ layout, box, refused, arranged, picture, told, label }: Props) {
   const { view, laid } = arranged;
   const { width, height, fontPx } = picture;
-  const halves = <Figures layout={layout} refused={refused} view={view} />;
   return (
     <svg
       role="img"
@@ -43,10 +42,10 @@ export function Drawing({ layout, box, refused, arranged, picture, told, label }
           <path class="hatch" d="M0 0V7" />
         </pattern>
       </defs>
-      <g class="mirrored" transform={`translate(${2 * view.axisX} 0) scale(-1 1)`}>
-        {halves}
+      <use class="mirrored" href="#right-half" transform={`translate(${2 * view.axisX} 0) scale(-1 1)`} />
+      <g id="right-half">
+        <Figures layout={layout} refused={refused} view={view} />
       </g>
-      {halves}
       <path class="axis" d={`M${view.axisX} ${yOf(view, box.high) - 10}V${yOf(view, box.low) + 10}`} />
       {laid.map((l, i) => (
         <DimensionLines key={i} laid={l} view={view} />
@@ -66,9 +65,9 @@ function Figures({ layout, refused, view }: Pick<Props, "layout" | "refused"> & 
   return (
     <>
       {bodies.map((body) => {
-        const d = pathOf(body.pieces, view);
         const kind = body.pointer.startsWith("/parts") ? "part" : "guide";
-        return <Filled key={body.pointer} d={d} kind={kind} refused={refused.bodies.has(body.pointer)} />;
+        const isRefused = refused.bodies.has(body.pointer);
+        return <Filled key={body.pointer} pieces={body.pieces} kind={kind} refused={isRefused} view={view} />;
       })}
       {copper !== null && <CopperFigures copper={copper} refused={refused} view={view} />}
     </>
@@ -82,14 +81,15 @@ function CopperFigures({ copper, refused, view }: { copper: Copper; refused: Ref
   return (
     <>
       <path
-        class="body copper"
+        class="copper edge"
+        style={{ strokeWidth: Math.min(1, (section.radialMm * view.scale) / 10) }}
         fill-rule="evenodd"
         d={pathOf(figures, view) + borePath(figures, section, view)}
       />
       {against.length > 0 && (
         <path class="against" d={against.map((t) => cross(t, section.radialMm, view)).join("")} />
       )}
-      {hatched.length > 0 && <path class="refused" d={pathOf(hatched, view)} />}
+      {hatched.length > 0 && <path class="refused edge-refused" d={pathOf(hatched, view)} />}
     </>
   );
 }
@@ -101,11 +101,20 @@ function cross(t: { r: number; z: number }, size: number, view: View): string {
   return `M${x - half} ${y - half}L${x + half} ${y + half}M${x - half} ${y + half}L${x + half} ${y - half}`;
 }
 
-function Filled({ d, kind, refused }: { d: string; kind: string; refused: boolean }) {
+interface FilledProps {
+  readonly pieces: readonly Figure[];
+  readonly kind: "part" | "guide";
+  readonly refused: boolean;
+  readonly view: View;
+}
+
+function Filled({ pieces, kind, refused, view }: FilledProps) {
+  const d = pathOf(pieces, view);
   return (
     <>
-      <path class={`body ${kind}`} d={d} />
+      <path class={kind} d={d} />
       {refused && <path class="refused" d={d} />}
+      <path class={refused ? "edge edge-refused" : "edge"} d={edgePath(pieces, view)} />
     </>
   );
 }
@@ -199,7 +208,8 @@ interface LeaderProps {
 function Leader({ laid, upright, segment, view }: LeaderProps) {
   const end = laid.line;
   const d = upright ? `M${laid.fromAt} ${laid.from}H${end}` : `M${laid.from} ${laid.fromAt}V${end}`;
-  const [[ax, ay], [bx, by]] = segment.map(([r, z]) => [xOf(view, r), yOf(view, z)]) as [Xy, Xy];
+  const [a, b] = segment;
+  const [ax, ay, bx, by] = [xOf(view, a[0]), yOf(view, a[1]), xOf(view, b[0]), yOf(view, b[1])];
   return (
     <>
       <path class="dimension" d={d} />

@@ -77,12 +77,13 @@ const keyOf = (d: Dimension): string => `${d.side} ${d.pointer} ${d.label} ${d.f
 function Measure({ laid }: { laid: Laid }) {
   const { dimension, x, y } = laid;
   const upright = dimension.side === "left" || dimension.side === "right";
+  const isName = dimension.words === dimension.label;
   return (
     <button
       type="button"
       class={upright ? "measure measure-upright" : "measure"}
       style={{ left: `${x}px`, top: `${y}px` }}
-      aria-label={`${dimension.label}: change it`}
+      aria-label={`${dimension.words}: ${isName ? "go to its words" : `${dimension.label} in mm, change it`}`}
       onClick={() => focusBlank(dimension.pointer)}
     >
       {dimension.words}

@@ -4,9 +4,10 @@ import type { Figure } from "../../../meshes/shapes.ts";
 import type { SectionMm } from "../../../meshes/windings.ts";
 import { type View, xOf, yOf } from "./arrange.ts";
 
-const px = (x: number): string => x.toFixed(2);
+/** Hundredths of a pixel; rounding so is much faster than toFixed. */
+const px = (x: number): number => Math.round(100 * x) / 100;
 
-/** Outlines of figures in the right half, each a closed subpath; what touches the axis stays open along it. */
+/** Outlines of figures in the right half, each a closed subpath. */
 export function pathOf(figures: readonly Figure[], view: View): string {
   return figures.map((f) => figurePath(f, view)).join("");
 }
@@ -21,6 +22,23 @@ function figurePath(f: Figure, view: View): string {
   // A sphere on the axis is half a disc; its mirror image is the other half.
   const half = `M${px(x)} ${px(y - radius)}${arc(y + radius)}`;
   return f.r === 0 ? `${half}Z` : `${half}${arc(y - radius)}Z`;
+}
+
+/** The surfaces of figures: their outlines without what lies on the axis, where nothing ends. */
+export function edgePath(figures: readonly Figure[], view: View): string {
+  return figures
+    .map((f) => {
+      if (f.kind === "disc") return figurePath(f, view).replace("Z", "");
+      const corners = f.points.map(([r, z]) => ({ r, at: `${px(xOf(view, r))} ${px(yOf(view, z))}` }));
+      return corners
+        .map((b, i) => ({ a: corners.at(i - 1)!, b, i }))
+        .map(({ a, b, i }) => {
+          const onAxis = a.r === 0 && b.r === 0;
+          return onAxis || i === 0 ? `M${onAxis ? "" : `${a.at}L`}${b.at}` : `L${b.at}`;
+        })
+        .join("");
+    })
+    .join("");
 }
 
 /** The bores of tubes, to be cut out of the copper's path by the even-odd rule. */

@@ -57,6 +57,9 @@ export function Blank({ blank, faults }: Props) {
           if (next === undefined) return;
           event.preventDefault();
           write(next, null);
+          // What is typed after a step replaces the number, as it does after entering the blank.
+          const input = event.currentTarget;
+          requestAnimationFrame(() => input.select());
         }}
       />
       {blank.unit !== "" && <span class="unit"> {blank.unit}</span>}

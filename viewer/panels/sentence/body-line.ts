@@ -127,7 +127,7 @@ function removal(at: string, whose: string): Action {
   return {
     kind: "action",
     words: "take away",
-    label: `Take ${whose} away`,
+    label: `${whose[0]!.toUpperCase()}${whose.slice(1)}: take away`,
     act: (document) => withValueAt(document, at, undefined),
     focus: () => blankId("Add a flux guide"),
   };

@@ -111,7 +111,8 @@ export function textBlank(at: string, label: string, empty: string, kind: "text"
       const value = valueAt(document, at);
       return value === undefined || value === null ? "" : String(value);
     },
-    put: (document, text) => withValueAt(document, at, text === "" ? undefined : text),
+    put: (document, text) =>
+      withValueAt(document, at, text === "" ? undefined : text.replaceAll(/\s*\n\s*/g, " ")),
   };
 }
 
@@ -148,7 +149,11 @@ export function strandsBlank(at: string): Blank {
     },
     put: (document, text) => {
       const strands = text.split(";").filter((s) => s.trim() !== "");
-      return withValueAt(document, at, strands.length === 0 ? "" : strands.map((s) => readList(s, Infinity)));
+      return withValueAt(
+        document,
+        at,
+        strands.length === 0 ? "" : strands.map((s) => readList(s.replaceAll(",", " "))),
+      );
     },
   };
 }
