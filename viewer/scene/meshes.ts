@@ -16,7 +16,7 @@ import type { Outline } from "../../meshes/heatmap.ts";
 import type { Heat } from "../heat.ts";
 import { type Paint, paintPixels } from "./paint.ts";
 import { opening } from "./pick.ts";
-import { rasterCells, type Window } from "./raster.ts";
+import type { Window } from "./raster.ts";
 import type { Rings } from "./rings.ts";
 
 /** Colours go to the screen as they are, so that they match the legend; only turned surfaces are shaded, and gently. */
@@ -76,11 +76,10 @@ export function surfaceMesh(rings: Rings, table: Uint32Array, columns: number): 
 }
 
 /** Both cut faces where the window shows them, with the section map on them. */
-export function faceMesh(heat: Heat, paint: Paint, window: Window, ids: Int32Array, ratio: number): Mesh {
+export function faceMesh(heat: Heat, paint: Paint, window: Window, ratio: number): Mesh {
   const { left, top, step, width, height } = window;
   const pixels = new Uint32Array(width * height);
-  rasterCells(heat.corners, window, ids);
-  paintPixels(ids, window, paint, pixels, { ground: 0, ratio });
+  paintPixels(heat.corners, window, paint, pixels, { ground: 0, ratio });
   const [right, bottom] = [left + width * step, top - height * step];
   const corners = [
     [left, top, 0, 0],

@@ -2,7 +2,7 @@
 import { heatColour } from "../../api/format/colour.ts";
 import { type HeatScale, position } from "../../api/format/heat-scale.ts";
 import type { Heat } from "../heat.ts";
-import { none, type Window } from "./raster.ts";
+import { rasterColours, type Window } from "./raster.ts";
 
 /** Red, green, blue, each 0 … 255. */
 export type Rgb = readonly [number, number, number];
@@ -20,6 +20,8 @@ export interface Palette {
 export interface Paint {
   /** A packed colour a cell, or `hatched`. */
   readonly colours: Uint32Array;
+  /** Whether any cell is hatched. */
+  readonly guides: boolean;
   readonly palette: Palette;
 }
 
@@ -59,7 +61,7 @@ export function paintOf(
     else if (scale === null || warm[body] === 0) colours[cell] = cold;
     else colours[cell] = ramp[Math.round(position(scale, density[cell]!) * (shades - 1))]!;
   }
-  return { colours, palette };
+  return { colours, guides: guides.includes(1), palette };
 }
 
 /** Distance between a guide's hatch lines and their width, in pixels of the screen. */
@@ -70,27 +72,33 @@ const hatching = { every: 7, line: 1.5 };
  * on the section, so that they travel with it; `ratio` is the pixels of the window to one of the screen.
  */
 export function paintPixels(
-  ids: Int32Array,
-  { width, height, left, top, step }: Window,
-  { colours, palette }: Paint,
+  corners: Heat["corners"],
+  window: Window,
+  paint: Paint,
   pixels: Uint32Array,
   { ground, ratio }: { readonly ground: number; readonly ratio: number },
+): void {
+  pixels.fill(ground);
+  rasterColours(corners, window, paint.colours, pixels);
+  if (paint.guides) hatchPixels(window, paint.palette, pixels, ratio);
+}
+
+function hatchPixels(
+  { width, height, left, top, step }: Window,
+  palette: Palette,
+  pixels: Uint32Array,
+  ratio: number,
 ): void {
   const guide = packed(palette.guide);
   const hatch = packed(palette.hatch);
   const every = Math.max(2, Math.round(hatching.every * ratio));
   const line = hatching.line * ratio;
-  const [i0, j0] = [Math.round(left / step), Math.round(-top / step)];
+  const start = Math.round(left / step) + Math.round(-top / step);
   for (let j = 0, at = 0; j < height; j++) {
     for (let i = 0; i < width; i++, at++) {
-      const cell = ids[at]!;
-      if (cell === none) {
-        pixels[at] = ground;
-        continue;
-      }
-      const colour = colours[cell]!;
-      if (colour !== hatched) pixels[at] = colour;
-      else pixels[at] = (((i + i0 + j + j0) % every) + every) % every < line ? hatch : guide;
+      if (pixels[at] !== hatched) continue;
+      const along = (((i + j + start) % every) + every) % every;
+      pixels[at] = along < line ? hatch : guide;
     }
   }
 }

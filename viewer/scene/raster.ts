@@ -22,19 +22,35 @@ export const none = -1;
 /** How far a centre may lie outside and still count, px: the corners' own rounding, so that neighbours leave no gap. */
 const slack = 1e-3;
 
-/** The cell of every pixel, row by row from the top left, `none` where there is none; written into `ids` when it is given. */
-export function rasterCells(
+/** The cell of every pixel, row by row from the top left, `none` where there is none. */
+export function rasterCells(corners: Heat["corners"], window: Window): Int32Array {
+  const ids = new Int32Array(window.width * window.height).fill(none);
+  fill(corners, window, ids, null);
+  return ids;
+}
+
+/** Every pixel's colour, `colours[cell]`; pixels without a cell stay as they are. */
+export function rasterColours(
   corners: Heat["corners"],
   window: Window,
-  ids: Int32Array = new Int32Array(window.width * window.height),
-): Int32Array {
-  ids.fill(none);
+  colours: Uint32Array,
+  pixels: Uint32Array,
+): void {
+  fill(corners, window, pixels, colours);
+}
+
+/** Both halves of the picture, as far as they are in the window; `values` null writes the cell's own number. */
+function fill(
+  corners: Heat["corners"],
+  window: Window,
+  out: Int32Array | Uint32Array,
+  values: Uint32Array | null,
+): void {
   const { left, top, step, width } = window;
   const inverse = 1 / step;
-  const right = left + step * width;
-  if (right > 0) fillHalf(corners, window, inverse, -left * inverse - 0.5, top * inverse - 0.5, ids);
-  if (left < 0) fillHalf(corners, window, -inverse, -left * inverse - 0.5, top * inverse - 0.5, ids);
-  return ids;
+  const [x0, y0] = [-left * inverse - 0.5, top * inverse - 0.5];
+  if (left + step * width > 0) fillHalf(corners, window, inverse, x0, y0, out, values);
+  if (left < 0) fillHalf(corners, window, -inverse, x0, y0, out, values);
 }
 
 /** One half of the picture: x = r·scaleX + x0, y = y0 − z·|scaleX|, pixel centres at whole numbers. One long loop, for speed. */
@@ -44,7 +60,8 @@ function fillHalf(
   scaleX: number,
   x0: number,
   y0: number,
-  ids: Int32Array,
+  out: Int32Array | Uint32Array,
+  values: Uint32Array | null,
 ): void {
   const scaleY = Math.abs(scaleX);
   const x = new Float64Array(5);
@@ -62,6 +79,7 @@ function fillHalf(
       if (py > yMax) yMax = py;
     }
     if (xMax < -slack || yMax < -slack || xMin > width || yMin > height) continue;
+    const value = values === null ? cell : values[cell]!;
     x[4] = x[0]!;
     y[4] = y[0]!;
     const last = Math.min(height - 1, Math.floor(yMax + slack));
@@ -86,7 +104,7 @@ function fillHalf(
       }
       const start = Math.max(0, Math.ceil(from - slack));
       const end = Math.min(width - 1, Math.floor(to + slack));
-      if (start <= end) ids.fill(cell, row * width + start, row * width + end + 1);
+      if (start <= end) out.fill(value, row * width + start, row * width + end + 1);
     }
   }
 }

@@ -48,7 +48,6 @@ export class Solid {
   private built: Built | null = null;
   /** The piece of the faces that was in view when the solid came to rest, finely. */
   private fine: Mesh | null = null;
-  private ids = new Int32Array(0);
   private pixels = { width: 1, height: 1, ratio: 1 };
   /** Counts what was asked to be shown; a building that is no longer the newest is given up. */
   private asked = 0;
@@ -89,7 +88,7 @@ export class Solid {
       turning: surfaceMesh(turning, table, columns),
       rest: surfaceMesh(rest, table, columns),
       lines: outlineLines(shown.heat.outlines, shown.ink),
-      whole: this.face(shown, wholeWindow(bounds), 1),
+      whole: faceMesh(shown.heat, shown.paint, wholeWindow(bounds), 1),
     };
     const { turning: a, rest: b, lines, whole } = this.built;
     this.scene.add(a, b, lines, whole);
@@ -106,11 +105,11 @@ export class Solid {
   /** Draws once: coarsely while it moves, else as finely as the screen. */
   draw(camera: Camera, moving: boolean): void {
     if (this.built === null) return;
-    const { turning, rest, whole, bounds } = this.built;
+    const { turning, rest, whole, bounds, heat, paint } = this.built;
     this.dropFine();
     const window = moving ? null : visibleWindow(camera, bounds, this.pixels);
     if (window !== null) {
-      this.fine = this.face(this.built, window, this.pixels.ratio);
+      this.fine = faceMesh(heat, paint, window, this.pixels.ratio);
       this.scene.add(this.fine);
     }
     turning.visible = moving;
@@ -133,12 +132,6 @@ export class Solid {
     this.camera.matrixWorld.copy(this.camera.matrixWorldInverse).invert();
     this.camera.projectionMatrix.fromArray(projection);
     this.camera.projectionMatrixInverse.copy(this.camera.projectionMatrix).invert();
-  }
-
-  private face({ heat, paint }: Shown, window: Window, ratio: number): Mesh {
-    const count = window.width * window.height;
-    if (this.ids.length < count) this.ids = new Int32Array(count);
-    return faceMesh(heat, paint, window, this.ids.subarray(0, count), ratio);
   }
 
   private dropFine(): void {

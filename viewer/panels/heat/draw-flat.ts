@@ -6,7 +6,6 @@ import { metresFromMm, mmFromMetres } from "../../../meshes/units.ts";
 import type { Heat } from "../../heat.ts";
 import { type FlatView, type Size, screenAt, windowOf } from "../../scene/flat-view.ts";
 import { type Paint, packed, paintPixels } from "../../scene/paint.ts";
-import { rasterCells } from "../../scene/raster.ts";
 import type { Inks } from "./tokens.ts";
 
 /** Room for the scales beside the plot, px. */
@@ -14,7 +13,6 @@ export const room = { left: 58, right: 10, top: 26, bottom: 44 };
 
 /** What is kept between drawings: pixels are made anew only when the size changes. */
 export interface Buffers {
-  ids: Int32Array;
   image: ImageData | null;
 }
 
@@ -70,11 +68,9 @@ function drawCells(
   const { width, height } = window;
   if (buffers.image?.width !== width || buffers.image.height !== height) {
     buffers.image = new ImageData(width, height);
-    buffers.ids = new Int32Array(width * height);
   }
-  rasterCells(heat.corners, window, buffers.ids);
   const pixels = new Uint32Array(buffers.image.data.buffer);
-  paintPixels(buffers.ids, window, paint, pixels, { ground: packed(inks.paperRgb), ratio });
+  paintPixels(heat.corners, window, paint, pixels, { ground: packed(inks.paperRgb), ratio });
   context.putImageData(buffers.image, Math.round(room.left * ratio), Math.round(room.top * ratio));
 }
 

@@ -21,7 +21,7 @@ const keyStep = 40;
 
 export function HeatFlat({ heat, scale }: HeatProps) {
   const canvas = useRef<HTMLCanvasElement>(null);
-  const buffers = useRef<Buffers>({ ids: new Int32Array(0), image: null });
+  const buffers = useRef<Buffers>({ image: null });
   const box = useSize(canvas);
   const size = useMemo(() => plotSize(box.width, box.height), [box]);
   const inks = useInks();

@@ -87,7 +87,8 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
   const read = (x: number, y: number): Seen | null => {
     if (built === null) return null;
     const { from, along } = rayAt(camera, (2 * x) / box.width - 1, 1 - (2 * y) / box.height);
-    return meet(heat, built, { from, along });
+    const met = meet(heat, built, { from, along });
+    return met === null ? null : { ...met, outside: met.on === "surface" };
   };
 
   return (
@@ -100,13 +101,13 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
       waiting={built === null}
       read={read}
       moves={[
-        { words: "turn left", act: () => rotate(2 * turn.key, 0) },
-        { words: "turn right", act: () => rotate(-2 * turn.key, 0) },
+        { words: "turn left", act: () => rotate(-2 * turn.key, 0) },
+        { words: "turn right", act: () => rotate(2 * turn.key, 0) },
       ]}
       gestures={{
         drag: (dx, dy) => rotate(dx * turn.px, dy * turn.px),
         zoom,
-        arrow: (dx, dy) => rotate(-dx * turn.key, dy * turn.key),
+        arrow: (dx, dy) => rotate(dx * turn.key, dy * turn.key),
         whole: () => setOrbit(atFirst),
         busy: setMoving,
       }}

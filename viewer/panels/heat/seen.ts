@@ -10,6 +10,8 @@ export interface Seen {
   readonly z: number;
   /** −1 in the open. */
   readonly cell: number;
+  /** On the surface itself, however far the drawn cells' corners cut it. */
+  readonly outside?: boolean;
 }
 
 export interface SeenWords {
@@ -31,7 +33,7 @@ export function densityWords(density: number): string {
 const skinOfPaint = 1e-5;
 
 /** The words for what is seen; decimals by the size of the whole design. */
-export function seenWords(heat: Heat, { r, z, cell }: Seen): SeenWords {
+export function seenWords(heat: Heat, { r, z, cell, outside }: Seen): SeenWords {
   const { rMax, zMin, zMax } = boundsOf(heat.outlines);
   const size = Math.max(rMax, Math.abs(zMin), Math.abs(zMax));
   const decimals = decimalsFor([mmFromMetres(size)], 4);
@@ -43,7 +45,7 @@ export function seenWords(heat: Heat, { r, z, cell }: Seen): SeenWords {
   const index = heat.outline[cell]!;
   const body = heat.outlines[index]!;
   const density = heat.density[cell]!;
-  const deep = depthBelow(heat.outlines, index, r, z);
+  const deep = outside === true ? 0 : depthBelow(heat.outlines, index, r, z);
   const depth =
     deep < skinOfPaint * size ? "at its surface" : `${plain(mmFromMetres(deep), 2)} mm below its surface`;
   return {

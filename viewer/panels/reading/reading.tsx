@@ -64,8 +64,8 @@ function Numerics({ result: { numerics: n, design } }: { readonly result: Result
   return (
     <p class="reading-small">
       Each ± should hold in at least 95 of 100 designs; the asked {asked}{" "}
-      {n.accuracyMet ? "holds" : "was not reached"}. {n.unknowns.toLocaleString("en")} unknowns on the finest
-      of {n.grids} grids, solved in {n.seconds.toFixed(1)} s.
+      {n.accuracyMet ? "holds" : "was not reached"}. {n.unknowns} unknowns on the finest of {n.grids} grids,
+      solved in {n.seconds.toFixed(1)} s.
     </p>
   );
 }
