@@ -39,7 +39,7 @@ export function Drawing({ layout, box, refused, arranged, picture, told, label }
           patternUnits="userSpaceOnUse"
           patternTransform="rotate(45)"
         >
-          <path class="hatch" d="M0 0V7" />
+          <path class="hs-hatch" d="M0 0V7" />
         </pattern>
       </defs>
       <use class="mirrored" href="#right-half" transform={`translate(${2 * view.axisX} 0) scale(-1 1)`} />
@@ -81,15 +81,15 @@ function CopperFigures({ copper, refused, view }: { copper: Copper; refused: Ref
   return (
     <>
       <path
-        class="copper edge"
+        class="hs-copper hs-edge"
         style={{ strokeWidth: Math.min(1, (section.radialMm * view.scale) / 10) }}
         fill-rule="evenodd"
         d={pathOf(figures, view) + borePath(figures, section, view)}
       />
       {against.length > 0 && (
-        <path class="against" d={against.map((t) => cross(t, section.radialMm, view)).join("")} />
+        <path class="hs-against" d={against.map((t) => cross(t, section.radialMm, view)).join("")} />
       )}
-      {hatched.length > 0 && <path class="refused edge-refused" d={pathOf(hatched, view)} />}
+      {hatched.length > 0 && <path class="hs-refused hs-edge-refused" d={pathOf(hatched, view)} />}
     </>
   );
 }
@@ -112,9 +112,9 @@ function Filled({ pieces, kind, refused, view }: FilledProps) {
   const d = pathOf(pieces, view);
   return (
     <>
-      <path class={kind} d={d} />
-      {refused && <path class="refused" d={d} />}
-      <path class={refused ? "edge edge-refused" : "edge"} d={edgePath(pieces, view)} />
+      <path class={`hs-${kind}`} d={d} />
+      {refused && <path class="hs-refused" d={d} />}
+      <path class={refused ? "hs-edge hs-edge-refused" : "hs-edge"} d={edgePath(pieces, view)} />
     </>
   );
 }

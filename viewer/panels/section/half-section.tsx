@@ -4,7 +4,7 @@
  */
 import { useLayoutEffect, useRef, useState } from "preact/hooks";
 import { coilSentence } from "../../../api/format/sentence.ts";
-import { boxAround, type Layout } from "../../../meshes/layout.ts";
+import { boxAround } from "../../../meshes/layout.ts";
 import { sketch } from "../../../meshes/sketch.ts";
 import { focusBlank } from "../../blank-id.ts";
 import { draft, faults, verdict } from "../../state.ts";
@@ -12,16 +12,16 @@ import { type Arranged, arrange, type Laid } from "./arrange.ts";
 import { type Dimension, dimensionsOf } from "./dimensions.ts";
 import { Drawing } from "./drawing.tsx";
 import { nameLeaders } from "./names.ts";
-import { refusedOf, steadied } from "./refused.ts";
+import { type Drawn, refusedOf, steadied } from "./refused.ts";
 import "./section.css";
 
-const nothing: Layout = { copper: null, bodies: [] };
+const nothing: Drawn = { document: null, layout: { copper: null, bodies: [] } };
 
 export function HalfSection() {
   const [frame, size] = useSize();
-  const last = useRef<Layout>(nothing);
+  const last = useRef<Drawn>(nothing);
   const layout = steadied(sketch(draft.value), last.current, draft.value);
-  last.current = layout;
+  last.current = { document: draft.value, layout };
   const box = boxAround([...(layout.copper?.figures ?? []), ...layout.bodies.flatMap((b) => b.pieces)]);
   const fontPx = size.width < 640 ? 12 : 13;
   const picture = { ...size, fontPx };

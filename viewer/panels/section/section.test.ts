@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { boxAround, type Layout } from "../../../meshes/layout.ts";
 import { sketch } from "../../../meshes/sketch.ts";
-import { valueAt, withValueAt } from "../../pointer.ts";
+import { withValueAt } from "../../pointer.ts";
 import { linesOf } from "../sentence/lines.ts";
 import { placesOf } from "../sentence/phrases.ts";
 import { arrange, FOOT, type Laid, scaleBarMm, wordsWidth, xOf, yOf } from "./arrange.ts";
@@ -166,12 +166,15 @@ describe("what is refused", () => {
     const { turn, bodies } = refusedOf([
       fault("/coil/winding/centresMm/3"),
       fault("/parts/1/diameterMm"),
-      fault("/guides/0"),
+      fault("/guides/0/of/pointsMm/3"),
     ]);
     expect([0, 1, 2, 3, 4].filter(turn)).toEqual([3]);
     expect([...bodies]).toEqual(["/parts/1", "/guides/0"]);
     expect([0, 1, 2, 3].filter(refusedOf([fault("/coil/winding/pitchMm/1")]).turn)).toEqual([1, 2]);
-    expect(refusedOf([fault("/coil/conductor/wallMm")]).turn(7)).toBe(true);
+    expect(
+      refusedOf([fault("/coil/conductor/wallMm")]).turn(7) &&
+        refusedOf([fault("/coil/winding/boreDiameterMm")]).turn(0),
+    ).toBe(true);
   });
 
   it("is not hatched for what has no place", () => {
@@ -179,6 +182,7 @@ describe("what is refused", () => {
       fault("/coil/conductor/temperatureC"),
       fault("/coil/strands"),
       fault("/parts/0/material/resistivityOhmM"),
+      fault("/parts/0/colour"),
       fault("/drive"),
     ]);
     expect(turn(0)).toBe(false);
@@ -194,11 +198,13 @@ describe("what is refused", () => {
       "8 k",
     );
     expect(sketch(typing).copper).toBeNull();
-    const shown = steadied(sketch(typing), before, typing);
+    const last = { document: design, layout: before };
+    const shown = steadied(sketch(typing), last, typing);
     expect(shown.copper).toBe(before.copper);
     expect(shown.bodies.map((b) => b.pointer)).toEqual(["/parts/0", "/parts/1"]);
     const taken = withValueAt(design, "/parts/1", undefined);
-    expect(steadied(sketch(taken), before, taken).bodies.map((b) => b.pointer)).toEqual(["/parts/0"]);
-    expect(valueAt(taken, "/parts/0/name")).toBe("crucible");
+    expect(steadied(sketch(taken), last, taken).bodies.map((b) => b.pointer)).toEqual(["/parts/0"]);
+    const other = withValueAt(typing, "/name", "another design");
+    expect(steadied(sketch(other), last, other).copper).toBeNull();
   });
 });

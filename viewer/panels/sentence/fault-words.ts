@@ -51,11 +51,21 @@ const inWords = (text: string): string =>
     .replace(atStart, (found) => words[found] ?? found)
     .replace(key, (_, found: string) => words[found] ?? found)
     .replaceAll(", without quotes", "")
-    .replaceAll("is the text “”", "is empty");
+    .replaceAll("is the text “”", "is empty")
+    // In the units of the blanks.
+    .replaceAll("a number of Hz", "a number of kHz")
+    .replaceAll("a number of Ω·m", "a number of µΩ·m, or with its unit: 2.5e-7 Ω·m");
 
 /** "… ; accepted: …" in one sentence. An unknown key is named as it stands in the document. */
 export function faultWords({ detail, accepted }: Fault): string {
-  if (detail.includes("is not a key known here")) return detail;
+  if (detail.includes("is not a key known here")) return `${detail}.`;
   const told = inWords(detail);
-  return accepted === undefined ? `${told}.` : `${told}. Accepted: ${inWords(accepted)}.`;
+  return accepted === undefined || detail.includes(accepted)
+    ? `${told}.`
+    : `${told}. Accepted: ${inWords(accepted)}.`;
+}
+
+/** Whether the fault is something no blank shows and that can only be taken away. */
+export function isStray({ pointer, detail }: Fault): boolean {
+  return detail.includes("is not a key known here") || pointer === "/format";
 }
