@@ -8,7 +8,7 @@ export interface Box {
 }
 
 /** The size of the element's parent; 0 × 0 before it is known. */
-export function useSize(element: { readonly current: HTMLElement | null }): Box {
+export function useSize(element: { readonly current: Element | null }): Box {
   const [box, setBox] = useState<Box>({ width: 0, height: 0 });
   useEffect(() => {
     const parent = element.current?.parentElement;

@@ -4,20 +4,23 @@ import { heatWords } from "../../../api/format/heat-words.ts";
 import { printable } from "../../../api/format/sentence.ts";
 import type { Part } from "../../../meshes/design.ts";
 import type { DepthShare, PartResult, Uncertain } from "../../../meshes/result.ts";
+import { Cautions } from "./cautions.tsx";
 import { Figure } from "./figure.tsx";
 
 export interface PartHeatProps {
   readonly part: PartResult;
   /** The part as designed. */
   readonly shape: Part | undefined;
+  readonly cautions: readonly string[];
 }
 
-export function PartHeat({ part, shape }: PartHeatProps) {
+export function PartHeat({ part, shape, cautions }: PartHeatProps) {
   const name = printable(part.name) || "part";
   return (
     <section aria-label={`Part: ${name}`}>
       <h2>{name}</h2>
       {part.powerW.value === 0 ? <p>Takes no heat.</p> : <Heated part={part} shape={shape} />}
+      <Cautions cautions={cautions} />
     </section>
   );
 }
@@ -25,7 +28,7 @@ export function PartHeat({ part, shape }: PartHeatProps) {
 const perArea: Unit = { factor: 1e4, symbol: "W/cm²" };
 const perVolume: Unit = { factor: 1e6, symbol: "W/cm³" };
 
-function Heated({ part, shape }: PartHeatProps) {
+function Heated({ part, shape }: Pick<PartHeatProps, "part" | "shape">) {
   const { short } = heatWords(part, shape);
   const lines: readonly (readonly [string, Uncertain, Unit, string])[] = [
     ["power", part.powerW, prefixed("W", [part.powerW.value]), ""],

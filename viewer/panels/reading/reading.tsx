@@ -2,6 +2,7 @@
 import { plain } from "../../../api/format/figures.ts";
 import type { Result } from "../../../meshes/result.ts";
 import { Bench, Stray } from "./bench.tsx";
+import { Cautions } from "./cautions.tsx";
 import { PartHeat } from "./part-heat.tsx";
 import { Powers } from "./powers.tsx";
 import { Terminals } from "./terminals.tsx";
@@ -10,6 +11,9 @@ import "./reading.css";
 
 export function Reading({ result }: { readonly result: Result }) {
   const { design, loaded, numerics, parts, strayField } = result;
+  // What is said of one part begins with its name, and stands with it.
+  const ofPart = (name: string): string[] => result.cautions.filter((text) => text.startsWith(`${name}: `));
+  const general = result.cautions.filter((text) => !parts.some(({ name }) => text.startsWith(`${name}: `)));
   return (
     <article class="reading" aria-label="Reading">
       {!numerics.accuracyMet && <Short asked={design.accuracyPercent} />}
@@ -18,10 +22,10 @@ export function Reading({ result }: { readonly result: Result }) {
         <p>No part in the coil: there is no loaded column, and all power is the coil's own.</p>
       )}
       <Powers power={result.power} bare={parts.length === 0} />
+      <Cautions cautions={general} />
       {parts.map((part, k) => (
-        <PartHeat key={k} part={part} shape={design.parts[k]} />
+        <PartHeat key={k} part={part} shape={design.parts[k]} cautions={ofPart(part.name)} />
       ))}
-      <Cautions cautions={result.cautions} />
       <Turns turns={result.turns} />
       {strayField.length > 0 && <Stray points={strayField} />}
       <Bench copper={result.copper} leads={result.leads} />
@@ -41,20 +45,6 @@ function Short({ asked }: { readonly asked: number }) {
       <strong>The asked {plain(asked, 3)} % was not reached.</strong> The figures stand, but only as well as
       the ± beside each says.
     </p>
-  );
-}
-
-function Cautions({ cautions }: { readonly cautions: readonly string[] }) {
-  if (cautions.length === 0) return null;
-  return (
-    <section class="reading-cautions" aria-label="Cautions">
-      <h2>Cautions</h2>
-      <ul>
-        {cautions.map((text) => (
-          <li key={text}>{text}</li>
-        ))}
-      </ul>
-    </section>
   );
 }
 
