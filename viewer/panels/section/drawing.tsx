@@ -124,7 +124,12 @@ function Name({ body, view, fontPx }: { body: Placed; view: View; fontPx: number
   if (place === null) return null;
   const turned = place.upright ? `rotate(-90 ${place.x} ${place.y})` : undefined;
   return (
-    <text class="name" x={place.x} y={place.y} transform={turned}>
+    <text
+      class={body.pointer.startsWith("/parts") ? "name" : "name name-of-guide"}
+      x={place.x}
+      y={place.y}
+      transform={turned}
+    >
       {body.label}
     </text>
   );

@@ -11,7 +11,7 @@ import { draft, faults, verdict } from "../../state.ts";
 import { type Arranged, arrange, type Laid } from "./arrange.ts";
 import { type Dimension, dimensionsOf } from "./dimensions.ts";
 import { Drawing } from "./drawing.tsx";
-import { nameLeaders } from "./names.ts";
+import { nameLabel, nameLeaders } from "./names.ts";
 import { type Drawn, refusedOf, steadied } from "./refused.ts";
 import "./section.css";
 
@@ -77,13 +77,13 @@ const keyOf = (d: Dimension): string => `${d.side} ${d.pointer} ${d.label} ${d.f
 function Measure({ laid }: { laid: Laid }) {
   const { dimension, x, y } = laid;
   const upright = dimension.side === "left" || dimension.side === "right";
-  const isName = dimension.words === dimension.label;
+  const isName = dimension.label === nameLabel;
   return (
     <button
       type="button"
       class={upright ? "measure measure-upright" : "measure"}
       style={{ left: `${x}px`, top: `${y}px` }}
-      aria-label={`${dimension.words}: ${isName ? "go to its words" : `${dimension.label} in mm, change it`}`}
+      aria-label={`${dimension.words}: ${isName ? dimension.label : `${dimension.label} in mm, change it`}`}
       onClick={() => focusBlank(dimension.pointer)}
     >
       {dimension.words}

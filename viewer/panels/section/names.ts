@@ -43,14 +43,13 @@ function outlineOf(piece: Figure, view: View): readonly Xy[] {
   });
 }
 
+/** In the right half where there is room, else across the axis: a piece that reaches it goes on in its mirror image. */
 function alongRows(points: readonly Xy[], need: number, fontPx: number, axisX: number): NamePlace | null {
-  for (const y of levels(points, 1)) {
-    const [a, b] = clear(points, y, fontPx / 2 + 3, 1);
-    // A piece that reaches the axis goes on in its mirror image.
-    const room = a <= axisX + 0.5 ? 2 * (b - axisX) : b - a;
-    if (room >= need) return { x: a <= axisX + 0.5 ? axisX : (a + b) / 2, y, upright: false };
-  }
-  return null;
+  const rows = levels(points, 1).map((y) => ({ y, ends: clear(points, y, fontPx / 2 + 3, 1) }));
+  const right = rows.find(({ ends: [a, b] }) => b - a >= need);
+  if (right !== undefined) return { x: (right.ends[0] + right.ends[1]) / 2, y: right.y, upright: false };
+  const across = rows.find(({ ends: [a, b] }) => a <= axisX + 0.5 && 2 * (b - axisX) >= need);
+  return across === undefined ? null : { x: axisX, y: across.y, upright: false };
 }
 
 function alongColumns(points: readonly Xy[], need: number, fontPx: number, axisX: number): NamePlace | null {
@@ -92,9 +91,15 @@ function widest(points: readonly Xy[], at: number, axis: 0 | 1): readonly [numbe
   return best;
 }
 
+/** What a leader to a name does when pressed. */
+export const nameLabel = "go to its words";
+
+/** More names than this are not told outside: each takes a lane of the drawing's room. */
+const MOST_LEADERS = 6;
+
 /** Leaders to the names that fit into no piece of their body, as measures without arrows under the drawing. */
 export function nameLeaders(bodies: readonly Placed[], view: View, fontPx: number): Dimension[] {
-  return bodies.flatMap((body): Dimension[] => {
+  const leaders = bodies.flatMap((body): Dimension[] => {
     const lowest = body.pieces[0];
     if (lowest === undefined || placeName(body.pieces, body.label, view, fontPx) !== null) return [];
     const { left, right, low, high } = figureBox(lowest);
@@ -107,13 +112,14 @@ export function nameLeaders(bodies: readonly Placed[], view: View, fontPx: numbe
         to: r,
         fromAt: from[1],
         toAt: from[1],
-        words: body.label,
-        label: body.label,
+        words: body.label.length > 28 ? `${body.label.slice(0, 27)}…` : body.label,
+        label: nameLabel,
         pointer: body.pointer,
         segment: [from, from],
       },
     ];
   });
+  return leaders.slice(0, MOST_LEADERS);
 }
 
 const cornersOf = (f: Figure): readonly Xy[] =>

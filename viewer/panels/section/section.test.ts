@@ -139,7 +139,7 @@ describe("the view", () => {
     expect(edgePath([{ kind: "disc", r: 0, z: 0, radius: 2 }], view)).not.toContain("Z");
   });
 
-  it("puts a name across the axis of what is solid, upright in what is narrow, and else outside", () => {
+  it("puts a name into the right half, across the axis of what is solid, upright in what is narrow, and else outside", () => {
     const view = { scale: 2, axisX: 100, zeroY: 100 };
     const piece = (a: number, b: number, low: number, high: number) =>
       [
@@ -153,7 +153,8 @@ describe("the view", () => {
           ],
         },
       ] as const;
-    expect(placeName(piece(0, 30, -20, 20), "billet", view, 12)).toEqual({ x: 100, y: 100, upright: false });
+    expect(placeName(piece(0, 30, -20, 20), "billet", view, 12)).toEqual({ x: 130, y: 100, upright: false });
+    expect(placeName(piece(0, 20, -20, 20), "billet", view, 12)).toEqual({ x: 100, y: 100, upright: false });
     expect(placeName(piece(20, 30, -40, 40), "billet", view, 12)?.upright).toBe(true);
     expect(placeName(piece(20, 24, -10, 10), "billet", view, 12)).toBeNull();
   });

@@ -48,7 +48,7 @@ export function Blank({ blank, faults }: Props) {
         {...shared}
         type="text"
         class={`blank blank-${blank.kind}`}
-        inputMode={blank.kind === "number" ? "decimal" : undefined}
+        inputMode={blank.quantity?.positive === true && blank.kind === "number" ? "decimal" : undefined}
         placeholder={blank.empty}
         style={{ width: `${length + 1.2}ch` }}
         onFocus={(event) => event.currentTarget.select()}
