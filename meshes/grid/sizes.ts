@@ -20,7 +20,7 @@ const GROWTH = 0.5;
 /** First cell at a right-angled corner of a conductor, in skin depths; of a magnetic one, whose corner field is singular. */
 const CORNER_SKIN = 0.85;
 const CORNER_SKIN_MAGNETIC = 0.45;
-/** First cell at a corner of a magnetic body that does not conduct, in lengths of its shorter side: its field is singular like that of a conducting one. */
+/** First cell at a corner of a magnetic body at most, in lengths of its shorter side: where the skin is wide or there is none, the body's own size is that of the singular field. */
 const CORNER_SHARE = 0.02;
 /** Longest cell on an arc, in radii: about a sixth of a quarter turn on a sphere, less on a wire's far side. */
 const ARC_SHARE = 0.62;
@@ -144,8 +144,8 @@ function addCorner(
     const trait = traits[region];
     if (trait === undefined || !trait.active) continue;
     const first = trait.magnetic ? CORNER_SKIN_MAGNETIC : CORNER_SKIN;
-    const own = Number.isFinite(trait.skinDepth) ? first * trait.skinDepth : CORNER_SHARE * shorter;
-    h = Math.min(h, own * Math.min(3, Math.PI / 2 / bend));
+    const most = trait.magnetic || trait.skinDepth === Infinity ? CORNER_SHARE * shorter : Infinity;
+    h = Math.min(h, Math.min(first * trait.skinDepth, most) * Math.min(3, Math.PI / 2 / bend));
   }
   if (h < Infinity) field.add(nodes.r[vertex], nodes.z[vertex], Math.min(h, 0.35 * shorter));
 }

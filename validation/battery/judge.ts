@@ -3,8 +3,10 @@ import type { Result } from "../../meshes/result.ts";
 import { kindOf, listed } from "./figures.ts";
 import type { Truth } from "./truth.ts";
 
-/** Two ways of working out what the drive fixes differ by rounding only; below this part of a figure nothing is judged. */
-const ROUNDING = 1e-12;
+/** A bar below this part of its figure says that the drive fixes it … */
+const SURE = 1e-12;
+/** … and then it agrees to this: grids know lengths to 2⁻³⁶ of a scene's size, and areas are made of them. */
+const ROUNDING = 1e-9;
 /** Stored truths carry ten digits. */
 const STORED = 1e-10;
 /** Parts below this share of the power are not held to the asked accuracy (contract, section 2). */
@@ -49,7 +51,7 @@ export function judged(id: string, result: Result, truth: Truth): Judged[] {
     const scale = true_ === 0 ? 1 : Math.abs(true_);
     const error = Math.abs(value - true_) / scale;
     const bar = plusMinus / scale;
-    if (bar <= ROUNDING && error <= STORED) continue;
+    if (bar <= SURE && error <= ROUNDING) continue;
     const slack = doubt / scale + STORED;
     const verdict = error <= bar ? "held" : error <= bar + slack ? "doubtful" : "missed";
     const governed = isGoverned(path, result);

@@ -67,8 +67,9 @@ export function byKind(rows: readonly Judged[]): Map<string, Judged[]> {
 const HEAD = `# The battery: are the bars true?
 
 Written by \`npm run validate -- --all\`. Every design of \`designs/\` is solved by \`predict\` as a user would, and every figure that carries a bar is compared with
-its truth in \`truth.json\`: our own solution two grid levels beyond the one \`predict\` stopped at when the truth was made (one where that passes 500 000
-unknowns), or a closed form. The truth's own doubt comes from its last two levels; it is made by \`npm run validate -- --make-truth\`.
+its truth in \`truth.json\`: our own solution two levels beyond the one \`predict\` stopped at when the truth was made (one where that passes 500 000
+unknowns), on a grid laid for 0.7 times the frequency, so that its cells are others than \`predict\`'s; or a closed form. The truth's own doubt comes from its last
+two levels; it is made by \`npm run validate -- --make-truth\`.
 
 Held: the truth lies within the bar. Doubtful: outside the bar, but within bar and the truth's doubt together. Missed: outside both. Coverage counts what is held
 alone. Figures that the drive fixes are not counted. Errors and bars are relative to the truth.

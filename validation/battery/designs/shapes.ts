@@ -321,12 +321,7 @@ export const SHAPES: readonly Entry[] = [
     tags: ["curved", "curved magnetic"],
     design: {
       coil: { conductor: tube(5, 0.8), winding: helix(52, 5, 8) },
-      parts: [
-        outline(
-          [[0, -24], [22, -24], ...arc([40, 0], 30, [233.13, 126.87], 14), [22, 24], [0, 24]],
-          steel(50),
-        ),
-      ],
+      parts: [outline([[0, -24], ...arc([40, 0], 30, [233.13, 126.87], 14), [0, 24]], steel(50))],
       drive: amps(20_000, 250),
     },
   },
@@ -337,15 +332,7 @@ export const SHAPES: readonly Entry[] = [
       coil: { conductor: bar(4), winding: helix(70, 4, 6) },
       parts: [
         outline(
-          [
-            [8, -12],
-            [30, -12],
-            [30, -8],
-            ...arc([30, 0], 6, [270, 90], 10).map(([r, z]) => [r, z] as const),
-            [30, 8],
-            [30, 12],
-            [8, 12],
-          ],
+          [[8, -12], [30, -12], [30, -8], ...arc([30, 0], 6, [270, 90], 10), [30, 8], [30, 12], [8, 12]],
           METALS.hotSteel,
         ),
       ],
