@@ -109,13 +109,23 @@ export const quickDesign = (name = "Tarnhollow: one ring") => ({
 /** The same without a part. */
 export const emptyDesign = () => ({ ...quickDesign("Tarnhollow: bare ring"), parts: [] });
 
-/** A design that keeps a thread busy for minutes: asked for more than the largest grid can give. */
+/** A design that keeps a thread busy for ten seconds or so: many turns, a sharp magnetic part, all the accuracy there is. */
 export const longDesign = () => ({
   ...quickDesign("Tarnhollow: long work"),
   coil: {
     conductor: { section: "roundTube", outsideDiameterMm: 8, wallMm: 1, material: "copper" },
-    winding: { form: "helix", boreDiameterMm: 50, turns: 12, pitchMm: 10 },
+    winding: { form: "helix", boreDiameterMm: 50, turns: 24, pitchMm: 10 },
   },
+  parts: [
+    {
+      name: "shaft",
+      shape: "cylinder",
+      diameterMm: 30,
+      boreDiameterMm: 12,
+      lengthMm: 90,
+      material: { resistivityOhmM: 2.5e-7, relativePermeability: 60 },
+    },
+  ],
   drive: { frequencyHz: 20_000, currentA: 100 },
   accuracyPercent: 0.01,
 });

@@ -4,7 +4,7 @@ import type { AddressInfo } from "node:net";
 import { destination, type Logger, pino } from "pino";
 import { buildApp } from "./app.ts";
 import type { Settings } from "./config.ts";
-import { formsThread } from "./engine/forms.ts";
+import { deskThread } from "./engine/desk.ts";
 import { threadPool } from "./engine/pool.ts";
 import { notStarted } from "./errors.ts";
 import { JobEvents } from "./jobs/events.ts";
@@ -35,7 +35,7 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
   const again = await store.requeueRunning();
   if (again > 0) log.info({ jobs: again }, "jobs of the last run are run again");
   const threads = new URL("pooled.mjs", entry);
-  const forms = formsThread(threads);
+  const desk = deskThread(threads);
   const engine = threadPool({
     entry: threads,
     threads: settings.workers,
@@ -44,13 +44,13 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
   });
   const events = new JobEvents();
   const runner = startRunner(store, engine, events, log);
-  const jobs = jobsOf(store, events, runner);
+  const jobs = jobsOf(store, desk, events, runner);
   let state: "starting" | "up" | "closing" = "starting";
   const app = buildApp({
     settings,
     jobs,
     events,
-    forms,
+    desk,
     log,
     viewer: new URL("viewer/", entry),
     ready: () => state === "up",
@@ -60,7 +60,7 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
   try {
     await listening(server, settings);
   } catch (error) {
-    await Promise.all([engine.close(), forms.close()]);
+    await Promise.all([engine.close(), desk.close()]);
     await store.close();
     throw error;
   }
@@ -75,7 +75,7 @@ export async function startService(settings: Settings, entry: URL): Promise<Runn
     await runner.close();
     server.closeAllConnections();
     await closed;
-    await Promise.all([engine.close(), forms.close()]);
+    await Promise.all([engine.close(), desk.close()]);
     await store.close();
   }
 

@@ -168,6 +168,29 @@ describe("requests that are turned down", () => {
     expect((await problemOf(twice)).errors[0]!.pointer).toBe("/parts");
   });
 
+  it("that are long are turned down alike, and meanwhile others are answered", async () => {
+    const strange = Object.fromEntries(Array.from({ length: 50_000 }, (_, k) => [`key${k}`, 1]));
+    const refused = service.post({ kind: "solve", document: { ...quickDesign(), ...strange } });
+    const waits: number[] = [];
+    let over = false;
+    const told = refused.then((response) => {
+      over = true;
+      return response;
+    });
+    while (!over) {
+      const asked = performance.now();
+      await service.ask("/healthz");
+      waits.push(performance.now() - asked);
+    }
+    expect(waits.length).toBeGreaterThan(3);
+    const problem = await problemOf(await told);
+    expect(problem.status).toBe(422);
+    expect(problem.errors[0]).toMatchObject({
+      pointer: "/key0",
+      detail: expect.stringContaining("key0 is not a key"),
+    });
+  });
+
   it.each([
     ["no JSON", "7 turns, please", 400, "unparsable"],
     ["no body", "", 400, "unparsable"],

@@ -10,6 +10,7 @@ import type { Outcome } from "./engine.ts";
 import { demandNumbers } from "./finite.ts";
 import type { Order, Report } from "./pool.ts";
 
+export { drafted } from "../jobs/request.ts";
 export { formed } from "./formed.ts";
 
 /** Progress is told no oftener than this, ms; a new stage at once. */

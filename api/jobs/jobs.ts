@@ -1,16 +1,16 @@
 /** What the doors do with jobs: submit, look, cancel, remove. */
 import { ended, type Job, type JobList } from "../contract/job.ts";
+import type { Desk } from "../engine/desk.ts";
 import { DoorError } from "../errors.ts";
 import type { Page, Store } from "../store/store.ts";
 import type { JobRow } from "../store/tables.ts";
 import type { JobEvents } from "./events.ts";
-import { draftOf } from "./request.ts";
 import type { Runner } from "./runner.ts";
 import { wireJob } from "./wire.ts";
 
 export type Jobs = ReturnType<typeof jobsOf>;
 
-export function jobsOf(store: Store, events: JobEvents, runner: Runner) {
+export function jobsOf(store: Store, desk: Desk, events: JobEvents, runner: Runner) {
   const wire = (row: JobRow): Job => wireJob(row, events);
 
   async function known(id: string): Promise<Job> {
@@ -31,10 +31,10 @@ export function jobsOf(store: Store, events: JobEvents, runner: Runner) {
 
     /**
      * Stores a job and sees that it runs. With a key that came before, the job that came with it.
-     * @throws Refusal; DoorError 422 for a key that came with another request
+     * @throws MappedError when request or document are not fit; DoorError 422 for a key that came with another request
      */
     async submit(text: string, clientKey: string | null): Promise<Job> {
-      const draft = draftOf(text, clientKey);
+      const draft = await desk.drafted({ text, clientKey });
       const { job, fingerprint, created } = await store.insert(draft);
       if (fingerprint !== draft.fingerprint) throw keyTaken();
       if (created) runner.wake();

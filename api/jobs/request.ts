@@ -6,16 +6,31 @@ import { readJson } from "../../meshes/json.ts";
 import { type Fault, Refusal } from "../../meshes/refusal.ts";
 import { carryKnownKeys, faultsFromIssues } from "../../meshes/words.ts";
 import { JobRequestSchema } from "../contract/job.ts";
+import { type Failure, toFailure } from "../errors.ts";
 import type { Draft } from "../store/store.ts";
 
 const documentPointer = "/document";
 
-/**
- * The job a request asks for.
- * @param clientKey its Idempotency-Key, null without
- * @throws Refusal when the text, the request or the document is not fit
- */
-export function draftOf(text: string, clientKey: string | null): Draft {
+export interface RequestText {
+  readonly text: string;
+  /** Its Idempotency-Key, null without. */
+  readonly clientKey: string | null;
+}
+
+/** Plain data, since it may come from another thread. */
+export type Drafted = { readonly draft: Draft } | { readonly failure: Failure };
+
+/** The job a request asks for, or why there is none. */
+export function drafted(request: RequestText): Drafted {
+  try {
+    return { draft: draftOf(request) };
+  } catch (error) {
+    return { failure: toFailure(error) };
+  }
+}
+
+/** @throws Refusal when the text, the request or the document is not fit */
+function draftOf({ text, clientKey }: RequestText): Draft {
   const body = fromDocument(() => readJson(text));
   const request = JobRequestSchema.safeParse(body, { error: carryKnownKeys });
   if (!request.success) throw new Refusal("refused", requestFaults(request.error.issues, body));

@@ -12,14 +12,14 @@ const endings: Record<FieldForm, string> = {
   "application/octet-stream": "npy",
 };
 
-export function fieldRoutes(router: Router, { jobs, forms }: Service): void {
+export function fieldRoutes(router: Router, { jobs, desk }: Service): void {
   door(router, "/v1/jobs/:id/fields/:quantity", {
     async get(request, response) {
       const quantity = quantityOf(request);
       const state = stateOf(request);
       const form = accepted(request, fieldForms) as FieldForm;
       const fields = await jobs.fields(String(request.params["id"]));
-      const said = await forms.formed({ fields, quantity, state, form });
+      const said = await desk.formed({ fields, quantity, state, form });
       if (said === null) throw notLoaded();
       response
         .type(form)

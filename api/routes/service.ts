@@ -1,7 +1,7 @@
 /** What the routes work with. */
 import type { Logger } from "pino";
 import type { Settings } from "../config.ts";
-import type { Forms } from "../engine/forms.ts";
+import type { Desk } from "../engine/desk.ts";
 import type { JobEvents } from "../jobs/events.ts";
 import type { Jobs } from "../jobs/jobs.ts";
 
@@ -9,8 +9,8 @@ export interface Service {
   readonly settings: Pick<Settings, "bodyBytes">;
   readonly jobs: Jobs;
   readonly events: JobEvents;
-  /** Where downloads that take long to write are written. */
-  readonly forms: Forms;
+  /** Where downloads are written that take long to write. */
+  readonly desk: Desk;
   readonly log: Logger;
   /** Folder of the built page. */
   readonly viewer: URL;
