@@ -2,13 +2,13 @@
 export function Cautions({ cautions }: { readonly cautions: readonly string[] }) {
   if (cautions.length === 0) return null;
   return (
-    <section class="reading-cautions" aria-label="Cautions">
+    <div class="reading-cautions" role="note" aria-label="Cautions">
       <h3>{cautions.length === 1 ? "Caution" : "Cautions"}</h3>
       <ul>
         {cautions.map((text) => (
           <li key={text}>{text}</li>
         ))}
       </ul>
-    </section>
+    </div>
   );
 }
