@@ -4,23 +4,15 @@
  * it is told to, never by itself: coarsely while it is turned, finely at rest.
  */
 import { Color, type LineSegments, type Mesh, PerspectiveCamera, Scene, WebGLRenderer } from "three";
-import { type Bounds, boundsOf, type Heat } from "../heat.ts";
+import { type Bounds, boundsOf } from "../heat.ts";
 import { type Boundary, boundaryOf, chainsOf } from "./boundary.ts";
 import { faceMesh, outlineLines, release, surfaceMesh } from "./meshes.ts";
 import { ballOf, type Camera } from "./orbit.ts";
-import { type Paint, plainColour } from "./paint.ts";
+import { plainColour } from "./paint.ts";
 import type { Window } from "./raster.ts";
 import { chainColours, ringsOf } from "./rings.ts";
+import type { Shown } from "./shown.ts";
 import { visibleWindow } from "./visible.ts";
-
-/** What is to be shown. */
-export interface Shown {
-  readonly heat: Heat;
-  readonly paint: Paint;
-  /** "#rrggbb" of the ground and of the outlines. */
-  readonly paper: string;
-  readonly ink: string;
-}
 
 /** Triangles of the surfaces while turning, and at rest; a processor drawing them alone does 25 000 in a tenth of a second. */
 const triangles = { turning: 16_000, rest: 70_000 };
@@ -28,7 +20,7 @@ const triangles = { turning: 16_000, rest: 70_000 };
 const coarse = 900;
 const columns = 1024;
 
-/** Lets the page breathe between two pieces of work. */
+/** Lets orders that came meanwhile be heard between two pieces of work. */
 const nextTask = (): Promise<void> => new Promise((done) => setTimeout(done));
 
 /** What stands in the scene for one heat map. */
@@ -53,7 +45,7 @@ export class Solid {
   private asked = 0;
 
   /** @throws when there is no WebGL */
-  constructor(canvas: HTMLCanvasElement) {
+  constructor(canvas: OffscreenCanvas) {
     this.renderer = new WebGLRenderer({ canvas, antialias: true });
     this.renderer.debug.checkShaderErrors = false;
     this.camera.matrixAutoUpdate = false;
@@ -61,7 +53,7 @@ export class Solid {
   }
 
   /**
-   * Builds the solid in pieces of work of some ten milliseconds. Resolves to its surface, for reading it; null when something
+   * Builds the solid in pieces of work. Resolves to its surface, for reading it; null when something
    * else was asked for meanwhile.
    */
   async show(shown: Shown): Promise<Boundary | null> {
@@ -117,14 +109,6 @@ export class Solid {
     whole.visible = window === null;
     this.look(camera);
     this.renderer.render(this.scene, this.camera);
-  }
-
-  /** Gives everything back, the graphics context too. */
-  dispose(): void {
-    this.asked += 1;
-    this.clear();
-    this.renderer.dispose();
-    this.renderer.forceContextLoss();
   }
 
   private look({ view, projection }: Camera): void {

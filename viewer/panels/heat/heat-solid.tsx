@@ -5,15 +5,12 @@ import type { Boundary } from "../../scene/boundary.ts";
 import { atFirst, cameraOf, closer, type Orbit, rayAt, turned } from "../../scene/orbit.ts";
 import { paintOf } from "../../scene/paint.ts";
 import { meet } from "../../scene/pick.ts";
-import type { Solid } from "../../scene/solid.ts";
+import { SolidLink, type Trouble } from "../../scene/solid-link.ts";
 import { HeatFlat, type HeatProps } from "./heat-flat.tsx";
 import type { Seen } from "./seen.ts";
 import { ratioNow, useSize } from "./size.ts";
 import { Stage } from "./stage.tsx";
 import { useInks } from "./tokens.ts";
-
-/** Why there is no solid to look at. */
-type Trouble = "missing" | "lost";
 
 export interface HeatSolidProps extends HeatProps {
   /** Turns the whole view to the flat map, where the solid cannot be shown. */
@@ -65,9 +62,7 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
   const [built, setBuilt] = useState<Boundary | null>(null);
 
   useEffect(() => {
-    void solid
-      ?.show({ heat, paint, paper: inks.paper, ink: inks.ink })
-      .then((surface) => surface !== null && setBuilt(surface));
+    solid?.show({ heat, paint, paper: inks.paper, ink: inks.ink }, setBuilt);
   }, [solid, heat, paint, inks]);
   useEffect(() => {
     if (solid === null || built === null || box.width === 0) return;
@@ -121,38 +116,17 @@ const sharesAt = (
   { width, height }: { readonly width: number; readonly height: number },
 ): [number, number] => [(x - width / 2) / height, (height / 2 - y) / height];
 
-/** The solid on the canvas; null until three.js is there. It is loaded when it is first needed, and given back on leaving. */
+/** The thread that draws on the canvas; null before there is one. It starts when it is first needed, and ends on leaving. */
 function useSolid(
   canvas: { readonly current: HTMLCanvasElement | null },
   onTrouble: (trouble: Trouble) => void,
-): Solid | null {
-  const [solid, setSolid] = useState<Solid | null>(null);
+): SolidLink | null {
+  const [solid, setSolid] = useState<SolidLink | null>(null);
   useEffect(() => {
-    const element = canvas.current;
-    if (element === null) return;
-    let made: Solid | null = null;
-    let left = false;
-    const lost = (): void => {
-      if (!left) onTrouble("lost");
-    };
-    element.addEventListener("webglcontextlost", lost);
-    const start = async (): Promise<void> => {
-      const scene = await import("../../scene/solid.ts");
-      if (left) return;
-      try {
-        made = new scene.Solid(element);
-      } catch {
-        onTrouble("missing");
-        return;
-      }
-      setSolid(made);
-    };
-    void start();
-    return () => {
-      left = true;
-      element.removeEventListener("webglcontextlost", lost);
-      made?.dispose();
-    };
+    if (canvas.current === null) return;
+    const made = new SolidLink(canvas.current, onTrouble);
+    setSolid(made);
+    return () => made.close();
   }, [canvas, onTrouble]);
   return solid;
 }
