@@ -11,6 +11,7 @@ import {
   renameSync,
   rmSync,
   statSync,
+  symlinkSync,
   writeFileSync,
 } from "node:fs";
 import { tmpdir } from "node:os";
@@ -126,6 +127,9 @@ async function bundled(entries) {
     const elsewhere = mkdtempSync(join(tmpdir(), "emberturn-"));
     process.on("exit", () => rmSync(elsewhere, { recursive: true, force: true }));
     for (const [name, text] of files) put(join(elsewhere, name), text);
+    // The service finds its packages and the page beside its bundle.
+    symlinkSync(join(root, "node_modules"), join(elsewhere, "node_modules"));
+    symlinkSync(join(folder, "viewer"), join(elsewhere, "viewer"));
     return elsewhere;
   }
 }
