@@ -184,9 +184,9 @@ function roomOf(document: unknown) {
   };
 }
 
-/** "part", or "part 2" and on where that is taken. */
+/** "part 2" beside one other, or the next number not taken. */
 function newName(document: unknown, list: string, word: string): string {
   const taken = listAt(document, `/${list}`).map((_, i) => valueAt(document, `/${list}/${i}/name`) ?? word);
-  const names = [word, ...Array.from({ length: taken.length + 1 }, (_, i) => `${word} ${i + 2}`)];
-  return names.find((n) => !taken.includes(n)) ?? word;
+  const numbers = Array.from({ length: taken.length + 1 }, (_, i) => taken.length + 1 + i);
+  return numbers.map((n) => `${word} ${n}`).find((name) => !taken.includes(name)) ?? word;
 }

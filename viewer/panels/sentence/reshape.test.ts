@@ -62,7 +62,10 @@ describe.each(examples)("%s", (file, design) => {
   it("takes one more part, one more guide, leads and strands", () => {
     expect(faultsOf(withPart(design))).toBe("");
     expect(faultsOf(withGuide(design))).toBe("");
-    expect(faultsOf(withPart(withPart(withGuide(withGuide(design)))))).toBe("");
+    const more = withPart(withPart(withGuide(withGuide(design))));
+    expect(faultsOf(more)).toBe("");
+    const names = (valueAt(more, "/parts") as { name: string }[]).map((p) => p.name);
+    expect(new Set(names).size).toBe(names.length);
     expect(faultsOf(reshapeLeads(design, true))).toBe("");
     expect(faultsOf(reshapeStrands(design, true))).toBe("");
     expect(faultsOf(reshapeStrands(reshapeLeads(design, false), false))).toBe("");
