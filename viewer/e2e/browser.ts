@@ -14,8 +14,8 @@ if (noBrowser) {
   console.warn("Chromium is not installed, so the page's tests are not run: sudo apt-get install chromium");
 }
 
-/** Draws 3-D in software, and talks to nobody but the page's own service. */
-export function launch(): Promise<Browser> {
+/** Draws 3-D in software, unless `more` forbids it, and talks to nobody but the page's own service. */
+export function launch(more: readonly string[] = []): Promise<Browser> {
   if (path === undefined) throw new Error("Chromium is not installed: apt-get install chromium");
   const args = [
     "--no-sandbox",
@@ -27,6 +27,7 @@ export function launch(): Promise<Browser> {
     "--disable-background-networking",
     "--disable-component-update",
     "--disable-sync",
+    ...more,
   ];
   return chromium.launch({ executablePath: path, args });
 }

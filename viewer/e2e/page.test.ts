@@ -131,15 +131,8 @@ describe.skipIf(noBrowser)("the page", { timeout: 120_000 }, () => {
   });
 
   it("keeps the flat map where the browser has no WebGL", async () => {
-    const other = await newPage();
-    await other.addInitScript(() => {
-      // biome-ignore lint/suspicious/noExplicitAny: the page's own types are not known here
-      const canvas = (globalThis as any).HTMLCanvasElement.prototype;
-      const real = canvas.getContext;
-      canvas.getContext = function (kind: string, ...rest: unknown[]) {
-        return kind.startsWith("webgl") ? null : real.call(this, kind, ...rest);
-      };
-    });
+    const plain = await launch(["--disable-3d-apis"]);
+    const other = await newPage(plain);
     const done = (await jobs()).find((job) => job.state === "done" && job.name.startsWith("Tarnhollow 01"));
     await other.goto(`${served.address}#job=${done?.id}`);
     await other.getByLabel("Heat, cut away", { exact: true }).first().check();
@@ -147,7 +140,7 @@ describe.skipIf(noBrowser)("the page", { timeout: 120_000 }, () => {
     expect(await axeFaults(other), "no WebGL").toEqual([]);
     await other.getByRole("radio", { name: "Heat, flat" }).check();
     await other.locator("canvas").first().waitFor();
-    await other.close();
+    await plain.close();
   });
 
   it("says when the service is gone, and goes on when it is back", async () => {
@@ -169,8 +162,8 @@ describe.skipIf(noBrowser)("the page", { timeout: 120_000 }, () => {
   });
 });
 
-async function newPage(): Promise<Page> {
-  const made = await browser.newPage({ viewport: { width: 1366, height: 768 } });
+async function newPage(of: Browser = browser): Promise<Page> {
+  const made = await of.newPage({ viewport: { width: 1366, height: 768 } });
   made.setDefaultTimeout(patience);
   made.on("pageerror", (error) => complaints.push(error.message));
   made.on("console", (message) => {
