@@ -125,7 +125,7 @@ export const COILS: readonly Entry[] = [
   },
   {
     id: "spiral-tube-60k",
-    tags: ["ci"],
+    tags: [],
     design: {
       coil: { conductor: tube(6, 1), winding: spiral(30, 4, 9) },
       drive: amps(60_000, 250),

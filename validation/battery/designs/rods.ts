@@ -123,7 +123,7 @@ export const RODS: readonly Entry[] = [
   },
   {
     id: "soft-core-wide-skin",
-    tags: ["magnetic edges", "wide skin"],
+    tags: ["magnetic edges", "wide skin", "ci"],
     design: {
       coil: { conductor: bar(4), winding: helix(30, 6, 5) },
       parts: [cylinder(20, 30, [1e-4, 200])],
