@@ -1,5 +1,4 @@
 /** `emberturn serve`: starts the service, shows the demo's figures where asked for, says the address, and ends in good order. */
-import { once } from "node:events";
 import { ResultSchema } from "../../meshes/result.ts";
 import { type ServeOptions, settingsOf } from "../config.ts";
 import { ended, type Job } from "../contract/job.ts";
@@ -14,7 +13,12 @@ export async function serveCommand(options: ServeOptions, entry: URL): Promise<v
   const demo = settings.demo === null ? null : await demoRequest(settings.demo);
   const service = await startService(settings, entry);
   endInOrder(service, settings.shutdownMs);
-  if (demo !== null) await showDemo(service, demo);
+  try {
+    if (demo !== null && !(await showDemo(service, demo))) return;
+  } catch (error) {
+    await service.close();
+    throw error;
+  }
   process.stdout.write(`emberturn is at ${service.address}\n`);
   // Only now: solving the demo for the first time warms a thread by itself, and is waited for.
   await service.warmUp();
@@ -39,9 +43,10 @@ function endInOrder(service: RunningService, shutdownMs: number): void {
   process.on("SIGTERM", () => end(143));
 }
 
-/** Solves the demo unless an earlier start has, and prints its figures. */
-async function showDemo(service: RunningService, demo: { text: string; key: string }): Promise<void> {
+/** Solves the demo unless an earlier start has, and prints its figures; false when the service ends before. */
+async function showDemo(service: RunningService, demo: { text: string; key: string }): Promise<boolean> {
   const job = await over(service, await service.jobs.submit(demo.text, demo.key));
+  if (job === null) return false;
   if (job.state === "done") {
     const result = ResultSchema.parse(JSON.parse(await service.jobs.result(job.id)));
     const colour = process.stdout.isTTY === true && process.env["NO_COLOR"] === undefined;
@@ -49,20 +54,23 @@ async function showDemo(service: RunningService, demo: { text: string; key: stri
   } else {
     process.stderr.write(`The demo was not solved: ${job.problem?.detail ?? job.state}\n`);
   }
+  return true;
 }
 
-/** The job at its end. */
-async function over({ jobs, events }: RunningService, job: Job): Promise<Job> {
-  const told = new AbortController();
-  const stop = events.listen(job.id, (notice) => {
-    if (notice === null || ended(notice.job.state)) told.abort();
-  });
-  try {
+/** The job at its end; null when the service ends before. */
+function over({ jobs, events }: RunningService, { id }: Job): Promise<Job | null> {
+  return new Promise((resolve, reject) => {
+    const stop = events.listen(id, (notice) => {
+      if (notice === null) tell(null);
+      else if (ended(notice.job.state)) tell(notice.job);
+    });
+    const tell = (job: Job | null): void => {
+      stop();
+      resolve(job);
+    };
     // Asked after listening has begun: an end in between is seen by one or the other.
-    const now = await jobs.known(job.id);
-    if (!ended(now.state) && !told.signal.aborted) await once(told.signal, "abort");
-    return await jobs.known(job.id);
-  } finally {
-    stop();
-  }
+    jobs.known(id).then((job) => {
+      if (ended(job.state)) tell(job);
+    }, reject);
+  });
 }
