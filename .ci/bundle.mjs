@@ -156,6 +156,8 @@ export async function builtViewer() {
       configFile: join(root, ".config/vite.config.ts"),
       build: { outDir: draft, emptyOutDir: true },
       plugins: [list],
+      // A thread of the page is built apart, from files of its own.
+      worker: { plugins: () => [list] },
       logLevel: "error",
     });
     const made = stamped(
