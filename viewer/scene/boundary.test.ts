@@ -83,6 +83,12 @@ describe("the surface of cells", () => {
     // Of the eight sides of three squares in a row the outer ones have three each, the middle one two.
     const count = (colour: number): number => table.filter((value) => value === colour).length;
     expect([count(10), count(11), count(12)]).toEqual([30, 20, 30]);
+    // Every side is 1 mm long and has ten colours: each lies over its own cell.
+    for (let i = 0; i < 80; i++) {
+      const [p, q] = [chains[0]!.points[Math.floor(i / 10)]!, chains[0]!.points[Math.floor(i / 10) + 1]!];
+      const r = (p[0] + q[0]) / 2;
+      expect(table[i]).toBe(10 + Math.min(2, Math.floor((r - 0.01) / 1e-3 - 1e-9)));
+    }
   });
 
   it("keeps to the triangles it is allowed, and points outwards", () => {
