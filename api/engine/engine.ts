@@ -46,7 +46,7 @@ export interface Engine {
   /** Tasks worked on at the same time; more may be given and wait. */
   readonly slots: number;
   run(task: Task, hooks: Hooks): Promise<Outcome>;
-  /** Makes the first task as quick as the later ones. */
+  /** Makes the first task about as quick as the later ones; gives way to it when it comes earlier. */
   warmUp(): Promise<void>;
   /** Ends all threads; what still runs is given up. */
   close(): Promise<void>;

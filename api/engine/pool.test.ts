@@ -3,7 +3,7 @@ import { writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { pathToFileURL } from "node:url";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
-import { temporaryFolder } from "../fixtures.ts";
+import { bundleFile, quickDesign, temporaryFolder } from "../fixtures.ts";
 import type { Engine, Outcome } from "./engine.ts";
 import { threadPool } from "./pool.ts";
 
@@ -90,5 +90,29 @@ describe("a thread", () => {
   it("is not asked for what was given up before it began", async () => {
     expect(await run("deaf", AbortSignal.abort())).toEqual({ state: "stopped" });
     await expectAlive();
+  });
+});
+
+describe("warming up", () => {
+  it("is solved by the real thread, and gives way to the first task", async () => {
+    const real = threadPool({
+      entry: new URL("pooled.mjs", pathToFileURL(bundleFile())),
+      threads: 1,
+      heapMb: 512,
+      graceMs,
+    });
+    try {
+      const begun = performance.now();
+      await real.warmUp();
+      const undisturbed = performance.now() - begun;
+      const again = real.warmUp();
+      const hooks = { signal: new AbortController().signal, onProgress: () => {} };
+      const outcome = await real.run({ kind: "solve", document: quickDesign() }, hooks);
+      expect(outcome.state).toBe("done");
+      await again;
+      expect(undisturbed).toBeGreaterThan(50);
+    } finally {
+      await real.close();
+    }
   });
 });

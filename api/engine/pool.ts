@@ -29,9 +29,33 @@ export interface Report {
   readonly progress: TaskProgress;
 }
 
+/** Solved once a thread, so that what runs hot is compiled before somebody waits for it. Small: compiling is most of it. */
+const warmUpTask: Task = {
+  kind: "solve",
+  document: {
+    coil: {
+      conductor: { section: "roundTube", outsideDiameterMm: 8, wallMm: 1, material: "copper" },
+      winding: { form: "helix", boreDiameterMm: 42, turns: 1 },
+    },
+    parts: [
+      {
+        name: "warm-up",
+        shape: "cylinder",
+        diameterMm: 28,
+        lengthMm: 40,
+        material: { resistivityOhmM: 3e-7 },
+      },
+    ],
+    drive: { frequencyHz: 8000, currentA: 100 },
+    accuracyPercent: 10,
+  },
+};
+
+const flag = (): Int32Array => new Int32Array(new SharedArrayBuffer(4));
+
 /** Starts the threads. */
 export function threadPool({ entry, threads, heapMb, graceMs }: PoolOptions): Engine {
-  const pool = new Piscina<Order | null, Outcome>({
+  const pool = new Piscina<Order, Outcome>({
     filename: fileURLToPath(entry),
     minThreads: threads,
     maxThreads: threads,
@@ -46,10 +70,13 @@ export function threadPool({ entry, threads, heapMb, graceMs }: PoolOptions): En
   // A thread that dies while idle is replaced by the pool; a task that dies with its thread is told by its own promise.
   pool.on("error", () => {});
   let runs = 0;
+  /** Stops warming up: it gives way to the first task. */
+  let warming = flag();
 
   async function run(task: Task, { onProgress, signal }: Hooks): Promise<Outcome> {
     if (signal.aborted) return { state: "stopped" };
-    const order: Order = { task, run: ++runs, stop: new Int32Array(new SharedArrayBuffer(4)) };
+    Atomics.store(warming, 0, 1);
+    const order: Order = { task, run: ++runs, stop: flag() };
     const end = new AbortController();
     let timer: NodeJS.Timeout | undefined;
     const stop = (): void => {
@@ -73,7 +100,9 @@ export function threadPool({ entry, threads, heapMb, graceMs }: PoolOptions): En
     slots: threads,
     run,
     async warmUp() {
-      await Promise.allSettled(Array.from({ length: threads }, () => pool.run(null)));
+      warming = flag();
+      const order: Order = { task: warmUpTask, run: 0, stop: warming };
+      await Promise.allSettled(Array.from({ length: threads }, () => pool.run(order)));
     },
     close: () => pool.destroy(),
   };

@@ -16,23 +16,9 @@ export { formed } from "./formed.ts";
 /** Progress is told no oftener than this, ms; a new stage at once. */
 const progressMs = 100;
 
-/** Solved once at the start of a thread, so that what runs hot is compiled before somebody waits for it. */
-const warmUpDesign = {
-  coil: {
-    conductor: { section: "roundTube", outsideDiameterMm: 8, wallMm: 1, material: "copper" },
-    winding: { form: "helix", boreDiameterMm: 42, turns: 2, pitchMm: 11 },
-  },
-  parts: [
-    { name: "warm-up", shape: "cylinder", diameterMm: 28, lengthMm: 40, material: { resistivityOhmM: 3e-7 } },
-  ],
-  drive: { frequencyHz: 8000, currentA: 100 },
-  accuracyPercent: 1,
-};
-
-/** Runs an order; null is the order to warm up. */
-export default function perform(order: Order | null): Outcome {
+/** Runs an order. */
+export default function perform(order: Order): Outcome {
   try {
-    if (order === null) return packed(predict(checkDesign(warmUpDesign), { fields: true }));
     return packed(predict(checkDesign(order.task.document), hooksOf(order)));
   } catch (error) {
     if (error instanceof Cancelled) return { state: "stopped" };
