@@ -67,7 +67,7 @@ export function HeatFlat({ heat, scale }: HeatProps) {
       label="Heat, flat: the cut along the axis"
       heat={heat}
       canvas={canvas}
-      verb="move the picture"
+      verb="move it"
       whole="whole"
       read={read}
       gestures={{

@@ -1,6 +1,6 @@
 /** The cut-away solid: turned, looked into and read by pointer, touch and keys; without WebGL the flat map stands in for it. */
 import { useCallback, useEffect, useMemo, useRef, useState } from "preact/hooks";
-import { boundsOf } from "../../heat.ts";
+import { boundsOf, type Heat } from "../../heat.ts";
 import type { Boundary } from "../../scene/boundary.ts";
 import { atFirst, cameraOf, closer, type Orbit, rayAt, turned } from "../../scene/orbit.ts";
 import { paintOf } from "../../scene/paint.ts";
@@ -58,11 +58,13 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
     [orbit, bounds, box],
   );
   const solid = useSolid(canvas, onTrouble);
-  // What was built last: drawn when it is there, and read from.
-  const [built, setBuilt] = useState<Boundary | null>(null);
+  // What was built last: drawn when it is there, and read from while it is of this very heat.
+  const [built, setBuilt] = useState<{ readonly of: Heat; readonly surface: Boundary } | null>(null);
 
   useEffect(() => {
-    solid?.show({ heat, paint, paper: inks.paper, ink: inks.ink }, setBuilt);
+    solid?.show({ heat, paint, paper: inks.paper, ink: inks.ink }, (surface) =>
+      setBuilt({ of: heat, surface }),
+    );
   }, [solid, heat, paint, inks]);
   useEffect(() => {
     if (solid === null || built === null || box.width === 0) return;
@@ -80,9 +82,9 @@ function Turnable({ heat, scale, onTrouble }: TurnableProps) {
   );
   const rotate = (dx: number, dy: number): void => setOrbit((now) => turned(now, dx, dy));
   const read = (x: number, y: number): Seen | null => {
-    if (built === null) return null;
+    if (built?.of !== heat) return null;
     const { from, along } = rayAt(camera, (2 * x) / box.width - 1, 1 - (2 * y) / box.height);
-    const met = meet(heat, built, { from, along });
+    const met = meet(heat, built.surface, { from, along });
     return met === null ? null : { ...met, outside: met.on === "surface" };
   };
 

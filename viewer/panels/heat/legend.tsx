@@ -54,6 +54,7 @@ function Bar({ scale }: { readonly scale: HeatScale }) {
   const width = Math.max(160, Math.min(bar.most, room));
   const length = width - 2 * bar.side;
   const x = (density: number): number => bar.side + length * position(scale, density);
+  const number = (density: number): string => plain(density / unit.factor, 3);
   const ramp = useId();
   const label = `Colours from dark violet, ${densityWords(scale.low)}, to pale yellow, ${densityWords(scale.high)}`;
   return (
@@ -71,15 +72,15 @@ function Bar({ scale }: { readonly scale: HeatScale }) {
           <g key={density}>
             <path class="heat-mark" d={`M${x(density)} ${bar.height}v5`} />
             <text x={x(density)} y={bar.height + 18} text-anchor="middle">
-              {plain(density / unit.factor, 3)}
+              {number(density)}
             </text>
           </g>
         ))}
       </svg>
       <figcaption>
-        Power density, {unit.symbol}, {scale.kind === "log" ? "logarithmic" : "linear from zero"}. The
-        brightest colour stands for {densityWords(scale.high)} and above
-        {scale.kind === "log" ? `, the darkest for ${densityWords(scale.low)} and below.` : "."}
+        Power density, {unit.symbol}, {scale.kind === "log" ? "logarithmic" : "linear from zero"}; the
+        brightest colour stands for {number(scale.high)} and above
+        {scale.kind === "log" ? `, the darkest for ${number(scale.low)} and below` : ""}.
       </figcaption>
     </>
   );

@@ -10,7 +10,7 @@ export interface StageProps {
   readonly label: string;
   readonly heat: Heat;
   readonly canvas: RefObject<HTMLCanvasElement>;
-  /** What dragging and arrow keys do: "turn" or "move". */
+  /** What dragging and arrow keys do: "turn it" or "move it". */
   readonly verb: string;
   /** What "whole" is called here. */
   readonly whole: string;
@@ -88,8 +88,8 @@ export function Stage(props: StageProps) {
         </button>
       </div>
       <p class="heat-hint" id={hint}>
-        Drag or use the arrow keys to {verb}, the wheel, two fingers or + and − to come closer. Shift with the
-        arrow keys moves a cross-hair that reads the heat.
+        Drag or arrow keys {verb}; wheel, two fingers or + and − bring it closer; Shift and arrow keys read
+        with a cross-hair.
       </p>
     </section>
   );
