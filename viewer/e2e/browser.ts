@@ -14,20 +14,22 @@ if (noBrowser) {
   console.warn("Chromium is not installed, so the page's tests are not run: sudo apt-get install chromium");
 }
 
-/** Draws 3-D in software, unless `more` forbids it, and talks to nobody but the page's own service. */
-export function launch(more: readonly string[] = []): Promise<Browser> {
+const drawing = {
+  software: ["--use-gl=angle", "--use-angle=swiftshader", "--enable-unsafe-swiftshader"],
+  none: ["--disable-gpu", "--disable-software-rasterizer"],
+} as const;
+
+/** Draws 3-D in software or not at all, and talks to nobody but the page's own service. */
+export function launch(webGl: keyof typeof drawing = "software"): Promise<Browser> {
   if (path === undefined) throw new Error("Chromium is not installed: apt-get install chromium");
   const args = [
     "--no-sandbox",
-    "--use-gl=angle",
-    "--use-angle=swiftshader",
-    "--enable-unsafe-swiftshader",
     "--disable-quic",
     "--no-first-run",
     "--disable-background-networking",
     "--disable-component-update",
     "--disable-sync",
-    ...more,
+    ...drawing[webGl],
   ];
   return chromium.launch({ executablePath: path, args });
 }

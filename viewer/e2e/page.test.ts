@@ -131,7 +131,7 @@ describe.skipIf(noBrowser)("the page", { timeout: 120_000 }, () => {
   });
 
   it("keeps the flat map where the browser has no WebGL", async () => {
-    const plain = await launch(["--disable-3d-apis"]);
+    const plain = await launch("none");
     const other = await newPage(plain);
     const done = (await jobs()).find((job) => job.state === "done" && job.name.startsWith("Tarnhollow 01"));
     await other.goto(`${served.address}#job=${done?.id}`);
