@@ -11,7 +11,7 @@ import {
   lossesOf,
   makeProbe,
   powerBalance,
-  prepare,
+  prepareFolded,
   quantileDensity,
   ringSources,
   sliceShares,
@@ -59,10 +59,15 @@ export const SLICES = 8;
 /** Solves level n of a built scene. `tick` hears the done fraction and may throw. */
 export function answerAt(scene: Scene, built: Built, level: number, tick: Tick): Answer {
   const grid = cutGrid(built.mesh, level);
-  const turnOfRegion = built.materials("empty").map((m) => m.turn);
   const hasParts = scene.bodies.some((b) => b.role === "part");
   const share = hasParts ? 0.45 : 0.9;
-  const prepared = prepare(grid, turnOfRegion, (f) => tick(0.1 * f));
+  const states = hasParts ? (["empty", "loaded"] as const) : (["empty"] as const);
+  const prepared = prepareFolded(
+    grid,
+    states.map((state) => built.materials(state)),
+    scene.circuit,
+    (f) => tick(0.1 * f),
+  );
   const omega = 2 * Math.PI * scene.frequency;
   const solve = (state: State, from: number): Solved => {
     const solution = solveState(prepared, { materials: built.materials(state), omega }, scene.circuit, (f) =>
@@ -90,7 +95,7 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
   );
   return {
     level,
-    unknowns: prepared.system.structure.unknowns,
+    unknowns: prepared.system.unknowns,
     values: table.values,
     parts: table.parts,
     orders: table.orders,

@@ -2,6 +2,7 @@
 export { MU0 } from "./constants.ts";
 export { type CellSamples, heatSampler } from "./field/density.ts";
 export { makeProbe, type PointField } from "./field/evaluate.ts";
+export { prepareFolded } from "./field/fold.ts";
 export type { CellIntegrals } from "./field/integrals.ts";
 export { makeLocator, type Place } from "./field/locate.ts";
 export { type Losses, lossesOf, powerBalance } from "./field/losses.ts";

@@ -46,6 +46,8 @@ export interface PatchMesh {
   readonly outer: { readonly centreZ: number; readonly radius: number } | null;
   /** Edge ids on that half circle, from bottom to top of the angle: first at θ = π (below), last at θ = 0. Empty without `outer`. */
   readonly outerEdges: Int32Array;
+  /** True: the second half of the patches are the mirror images of the first, in the same order, about the outer circle's middle. */
+  readonly mirrored?: boolean;
 }
 
 /** A grid of nine-node cells, with its mapped exterior where space is open. */
@@ -64,6 +66,8 @@ export interface Grid {
   /** Cells along a patch's edge. */
   readonly level: number;
   readonly exterior: Exterior | null;
+  /** As the patches'; see grid/halve.ts. */
+  readonly mirrored?: boolean;
 }
 
 /**

@@ -314,7 +314,7 @@ function reflect(mesh: PatchMesh, input: MeshInput): PatchMesh {
       radius,
     });
   }
-  return makePatchMesh(
+  const whole = makePatchMesh(
     Float64Array.from(r),
     Float64Array.from(z),
     Int32Array.from(corners),
@@ -322,4 +322,5 @@ function reflect(mesh: PatchMesh, input: MeshInput): PatchMesh {
     [...arcs.values()],
     mesh.outer,
   );
+  return { ...whole, mirrored: true };
 }

@@ -3,7 +3,7 @@
  * (s, z)(ξ, η) = Σ N_i (s_i, z_i).
  */
 import { sideOnAxis } from "./axis.ts";
-import type { Prepared } from "./prepare.ts";
+import type { Laid } from "./prepare.ts";
 import { emptyTable, NODES, shapeAt } from "./shape.ts";
 
 /** A place inside a cell. */
@@ -27,7 +27,7 @@ const INSIDE = 1e-9;
 const TOLERATED = 0.02;
 
 /** Builds the buckets of a grid; one locator serves all solutions on it. */
-export function makeLocator(prepared: Prepared): Locator {
+export function makeLocator(prepared: Laid): Locator {
   const { grid, integrals } = prepared;
   const cells = grid.cellRegion.length;
   const box = new Float64Array(cells * 4);

@@ -3,14 +3,29 @@ import { SolverError } from "../errors.ts";
 import { type Analysis, analyse } from "../linear/direct.ts";
 import type { Complex, ComplexVector, Grid } from "../types.ts";
 import { type CellIntegrals, integrateCells } from "./integrals.ts";
-import { type FieldState, numberUnknowns, type System } from "./system.ts";
+import { type CellTurns, type FieldState, numberUnknowns, type System } from "./system.ts";
 
-/** A grid made ready; reused for both states and every frequency. */
-export interface Prepared {
+/** What the reading of a solution needs of its grid. */
+export interface Laid {
   readonly grid: Grid;
   readonly integrals: CellIntegrals;
+  readonly system: CellTurns;
+}
+
+/** A grid made ready; reused for both states and every frequency. */
+export interface Prepared extends Laid {
   readonly system: System;
   readonly analysis: Analysis;
+}
+
+/** A mirror-symmetric grid made ready by half; see fold.ts. */
+export interface Folded extends Laid {
+  readonly half: Prepared;
+  /** Node of the half for every node, turn of the half for every turn. */
+  readonly nodeOf: Int32Array;
+  readonly turnOf: Int32Array;
+  /** Per turn of the half: 1 where it stands for a pair, ½ where half of it is there. */
+  readonly share: Float64Array;
 }
 
 /** Hears the done fraction 0…1 of a long step; may throw, which ends the step. */
@@ -18,7 +33,7 @@ export type Tick = (fraction: number) => void;
 
 /** A solved field. */
 export interface Solution extends FieldState {
-  readonly prepared: Prepared;
+  readonly prepared: Laid;
   /** ψ at every node of the grid, Wb/rad rms; 0 on fixed nodes. With an applied field: the whole field inside the outer circle, the reaction alone beyond. */
   readonly psi: ComplexVector;
   /** u_k of every turn, Wb/rad. */

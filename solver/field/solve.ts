@@ -9,8 +9,8 @@ import { MU0 } from "../constants.ts";
 import { SolverError } from "../errors.ts";
 import { type Factor, factorise, solveRefined } from "../linear/direct.ts";
 import type { ElementValues } from "../linear/structure.ts";
-import type { Circuit, Complex, ComplexVector, RegionMaterial } from "../types.ts";
-import type { CoilSolution, Prepared, Tick } from "./prepare.ts";
+import type { Circuit, Complex, ComplexVector } from "../types.ts";
+import type { CoilSolution, Folded, Prepared, Tick } from "./prepare.ts";
 import { checkState, elementValues, type FieldState } from "./system.ts";
 
 /** One matrix, factorised. */
@@ -38,32 +38,43 @@ export function factoriseState(prepared: Prepared, state: FieldState, tick?: Tic
  * `state.omega` in rad/s. Throws SolverError `circuit` when the circuit does not fit the prepared turns.
  */
 export function solveState(
-  prepared: Prepared,
+  prepared: Prepared | Folded,
   state: FieldState,
   circuit: Circuit,
   tick?: Tick,
 ): CoilSolution {
-  const { system } = prepared;
-  const paths = checkCircuit(circuit, system.turns);
-  const { values, factor } = factoriseState(prepared, state, tick);
-  const n = system.structure.unknowns;
-  const fields: ComplexVector[] = [];
+  const paths = checkCircuit(circuit, prepared.system.turns);
+  const { solved, own, turnOf, share } = equationsOf(prepared, state);
+  const { values, factor } = factoriseState(solved, own, tick);
+  const { structure, nodal } = solved.system;
+  const n = structure.unknowns;
+  const fields: Field[] = [];
   let residual = 0;
   for (let p = 0; p < paths; p++) {
     tick?.(AFTER + ((1 - AFTER) * p) / paths);
     const rhs = { re: new Float64Array(n), im: new Float64Array(n) };
-    for (let k = 0; k < system.turns; k++)
-      if (circuit.path[k] === p) rhs.re[system.nodal + k] = MU0 * circuit.sense[k];
+    for (let k = 0; k < circuit.turns; k++)
+      if (circuit.path[k] === p) rhs.re[nodal + turnOf[k]] = MU0 * circuit.sense[k] * share[turnOf[k]];
     const refined = solveRefined(factor, values, rhs);
     residual = Math.max(residual, refined.residual);
-    fields.push(refined.x);
+    fields.push(fieldAt(prepared, refined.x));
   }
-  const pathImpedances = impedancesOf(fields, circuit, system.nodal, state.omega);
+  const pathImpedances = impedancesOf(fields, circuit, state.omega);
   const { impedance, currents } = shareCurrent(pathImpedances, paths);
-  const x = superpose(fields, currents);
+  const psi = superpose(
+    fields.map((f) => f.psi),
+    currents,
+  );
+  const u = superpose(
+    fields.map((f) => f.u),
+    currents,
+  );
   tick?.(1);
   return {
-    ...fieldOf(prepared, state, x),
+    prepared,
+    ...conditions(state),
+    psi,
+    u,
     applied: 0,
     residual,
     impedance,
@@ -73,37 +84,63 @@ export function solveState(
   };
 }
 
-/** The parts every solution has: the state, ψ by node, u by turn. */
-export function fieldOf(
-  prepared: Prepared,
+/** What is solved: a state of the grid, or of its half; per turn its number there, and how much of it is there. */
+function equationsOf(
+  prepared: Prepared | Folded,
   state: FieldState,
-  x: ComplexVector,
-): {
-  prepared: Prepared;
-  materials: readonly RegionMaterial[];
-  omega: number;
-  cellReluctivity?: ComplexVector;
-  psi: ComplexVector;
-  u: ComplexVector;
-} {
-  const { unknownOfNode, nodal } = prepared.system;
-  const nodes = unknownOfNode.length;
+): { solved: Prepared; own: FieldState; turnOf: Int32Array; share: Float64Array } {
+  if (!("half" in prepared)) {
+    const { turns } = prepared.system;
+    const turnOf = Int32Array.from({ length: turns }, (_, k) => k);
+    return { solved: prepared, own: state, turnOf, share: new Float64Array(turns).fill(1) };
+  }
+  const { half, turnOf, share } = prepared;
+  if (state.cellReluctivity !== undefined)
+    throw new SolverError("materials", "ν cell by cell needs the whole grid");
+  const materials = state.materials.map((m) => (m.turn < 0 ? m : { ...m, turn: turnOf[m.turn] }));
+  return { solved: half, own: { materials, omega: state.omega }, turnOf, share };
+}
+
+/** ψ by node of the whole grid, u by turn. */
+interface Field {
+  readonly psi: ComplexVector;
+  readonly u: ComplexVector;
+}
+
+/** A solution of the equations, read at every node and turn; unfolded where they are those of the half. */
+function fieldAt(prepared: Prepared | Folded, x: ComplexVector): Field {
+  const folded = "half" in prepared;
+  const { unknownOfNode, nodal } = folded ? prepared.half.system : prepared.system;
+  const nodes = prepared.grid.r.length;
+  const { turns } = prepared.system;
   const psi = { re: new Float64Array(nodes), im: new Float64Array(nodes) };
   for (let i = 0; i < nodes; i++) {
-    const unknown = unknownOfNode[i];
+    const unknown = unknownOfNode[folded ? prepared.nodeOf[i] : i];
     if (unknown < 0) continue;
     psi.re[i] = x.re[unknown];
     psi.im[i] = x.im[unknown];
   }
-  const { materials, omega, cellReluctivity } = state;
-  return {
-    prepared,
-    materials,
-    omega,
-    ...(cellReluctivity === undefined ? {} : { cellReluctivity }),
-    psi,
-    u: { re: x.re.slice(nodal), im: x.im.slice(nodal) },
-  };
+  const u = { re: new Float64Array(turns), im: new Float64Array(turns) };
+  for (let k = 0; k < turns; k++) {
+    const at = nodal + (folded ? prepared.turnOf[k] : k);
+    u.re[k] = x.re[at];
+    u.im[k] = x.im[at];
+  }
+  return { psi, u };
+}
+
+/** The state a solution belongs to. */
+function conditions({ materials, omega, cellReluctivity }: FieldState): FieldState {
+  return { materials, omega, ...(cellReluctivity === undefined ? {} : { cellReluctivity }) };
+}
+
+/** The parts every solution of whole equations has: the state, ψ by node, u by turn. */
+export function fieldOf(
+  prepared: Prepared,
+  state: FieldState,
+  x: ComplexVector,
+): Field & FieldState & { prepared: Prepared } {
+  return { prepared, ...conditions(state), ...fieldAt(prepared, x) };
 }
 
 /** Number of paths. */
@@ -118,19 +155,14 @@ function checkCircuit(circuit: Circuit, turns: number): number {
 }
 
 /** Z_pq = 2πjω Σ_{k on p} c_k u_k of the field of 1 A in path q. */
-function impedancesOf(
-  fields: readonly ComplexVector[],
-  circuit: Circuit,
-  nodal: number,
-  omega: number,
-): ComplexVector {
+function impedancesOf(fields: readonly Field[], circuit: Circuit, omega: number): ComplexVector {
   const paths = fields.length;
   const z = { re: new Float64Array(paths * paths), im: new Float64Array(paths * paths) };
-  fields.forEach((x, q) => {
+  fields.forEach(({ u }, q) => {
     for (let k = 0; k < circuit.turns; k++) {
       const at = circuit.path[k] * paths + q;
-      z.re[at] -= 2 * Math.PI * omega * circuit.sense[k] * x.im[nodal + k];
-      z.im[at] += 2 * Math.PI * omega * circuit.sense[k] * x.re[nodal + k];
+      z.re[at] -= 2 * Math.PI * omega * circuit.sense[k] * u.im[k];
+      z.im[at] += 2 * Math.PI * omega * circuit.sense[k] * u.re[k];
     }
   });
   return z;

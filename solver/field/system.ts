@@ -23,17 +23,23 @@ export interface FieldState {
   readonly cellReluctivity?: ComplexVector;
 }
 
+/** Turns and cells of a grid. */
+export interface CellTurns {
+  readonly turns: number;
+  /** Turn whose copper a cell inside the outer circle is, or −1. */
+  readonly turnOfCell: Int32Array;
+  /** Number of unknowns, ψ and u. */
+  readonly unknowns: number;
+}
+
 /** Unknowns of a grid and which of them each cell couples. */
-export interface System {
+export interface System extends CellTurns {
   /** ψ unknowns first, then one u a turn. */
   readonly structure: ElementStructure;
   /** Unknown id of every node, −1 where ψ is fixed. */
   readonly unknownOfNode: Int32Array;
   /** Number of ψ unknowns: u of turn k is unknown nodal + k. */
   readonly nodal: number;
-  readonly turns: number;
-  /** Turn whose copper a cell inside the outer circle is, or −1. */
-  readonly turnOfCell: Int32Array;
 }
 
 /** Numbers the unknowns. `turnOfRegion`: turn of each region id, or −1. */
@@ -41,6 +47,16 @@ export function numberUnknowns(grid: Grid, turnOfRegion: ArrayLike<number>): Sys
   const unknownOfNode = new Int32Array(grid.fixed.length).fill(-1);
   let nodal = 0;
   for (let i = 0; i < unknownOfNode.length; i++) if (grid.fixed[i] === 0) unknownOfNode[i] = nodal++;
+  const { turns, turnOfCell } = turnsOfCells(grid, turnOfRegion);
+  const structure = structureOf(grid, unknownOfNode, turnOfCell, nodal, turns);
+  return { structure, unknownOfNode, nodal, turns, turnOfCell, unknowns: nodal + turns };
+}
+
+/** Number of turns, and the turn of every cell. Throws SolverError `materials` when a region is missing. */
+export function turnsOfCells(
+  grid: Grid,
+  turnOfRegion: ArrayLike<number>,
+): Pick<CellTurns, "turns" | "turnOfCell"> {
   let turns = 0;
   for (let i = 0; i < turnOfRegion.length; i++) turns = Math.max(turns, turnOfRegion[i] + 1);
   const turnOfCell = new Int32Array(grid.cellRegion.length);
@@ -50,8 +66,7 @@ export function numberUnknowns(grid: Grid, turnOfRegion: ArrayLike<number>): Sys
       throw new SolverError("materials", `region ${region} has no entry among ${turnOfRegion.length}`);
     turnOfCell[c] = turnOfRegion[region];
   }
-  const structure = structureOf(grid, unknownOfNode, turnOfCell, nodal, turns);
-  return { structure, unknownOfNode, nodal, turns, turnOfCell };
+  return { turns, turnOfCell };
 }
 
 function structureOf(

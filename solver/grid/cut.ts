@@ -62,7 +62,8 @@ export function cutGrid(mesh: PatchMesh, n: number): Grid {
   const fixed = new Uint8Array(total);
   for (let i = 0; i < total; i++) if (r[i] === 0) fixed[i] = 1;
   const exterior = cutExterior(mesh, n, firstInner + patches * m * m, r, z, fixed);
-  return { r, z, fixed, cellNodes, cellRegion, cellPatch, level: n, exterior };
+  const mirrored = mesh.mirrored === true;
+  return { r, z, fixed, cellNodes, cellRegion, cellPatch, level: n, exterior, mirrored };
 }
 
 /** Point at parameter t of edge e (from its first end), into out. */
