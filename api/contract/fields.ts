@@ -1,6 +1,7 @@
 /**
  * The field quantities of a job as downloads: one array, said as JSON, as CSV, or as NumPy's .npy. Pure and browser-safe.
  */
+import ndarray, { type NdArray } from "ndarray";
 import type { FieldGrid, Fields, StateFields } from "../../meshes/fields.ts";
 import { encodeNpy } from "./npy.ts";
 
@@ -138,14 +139,15 @@ export function fieldDocument({ quantity, state, shape, re, im }: FieldArray): F
     resampled: true,
     description: `${description} ${RESAMPLED}`,
   };
-  const numbers = im === null ? { values: nest(re, shape) } : { re: nest(re, shape), im: nest(im, shape) };
+  const nested = (values: Float64Array): Nested => nest(ndarray(values, [...shape]));
+  const numbers = im === null ? { values: nested(re) } : { re: nested(re), im: nested(im) };
   return { ...about, resampled: true, ...numbers };
 }
 
-function nest(values: Float64Array, [first = 0, ...rest]: readonly number[]): Nested {
-  if (rest.length === 0) return Array.from(values);
-  const step = values.length / first;
-  return Array.from({ length: first }, (_, i) => nest(values.subarray(i * step, (i + 1) * step), rest));
+function nest(view: NdArray<Float64Array>): Nested {
+  const each = { length: view.shape[0] ?? 0 };
+  if (view.dimension === 1) return Array.from(each, (_, i) => view.get(i));
+  return Array.from(each, (_, i) => nest(view.pick(i)));
 }
 
 /** The .npy form: float64 or complex128 in C order. */

@@ -1,7 +1,7 @@
 /** One button, one quiet line of progress, cancel; and in words what stands in the way. */
 import { ended, type Job } from "../../../api/contract/job.ts";
 import type { Problem } from "../../../api/contract/problem.ts";
-import { answer, asking, asSolved, cancel, job, problem, reachable, solve } from "../../jobs.ts";
+import { answer, asItWas, asking, asSolved, cancel, job, problem, reachable, solve } from "../../jobs.ts";
 import { faults } from "../../state.ts";
 import "./solve-line.css";
 
@@ -66,7 +66,12 @@ function Standing() {
   return asSolved.value ? (
     <p class="standing">The figures below belong to this design.</p>
   ) : (
-    <p class="standing changed">The blanks have changed since the figures below were worked out.</p>
+    <p class="standing changed">
+      The blanks have changed since the figures below were worked out.{" "}
+      <button type="button" class="plain" onClick={asItWas}>
+        put the solved design back
+      </button>
+    </p>
   );
 }
 
