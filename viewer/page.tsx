@@ -1,4 +1,5 @@
 /** The whole page in the winder's order: describe, solve, look, change. */
+import { signal } from "@preact/signals";
 import { answer, reachable } from "./jobs.ts";
 import { Reading } from "./panels/reading/reading.tsx";
 import { Sentence } from "./panels/sentence/sentence.tsx";
@@ -6,7 +7,11 @@ import { Shelf } from "./panels/shelf/shelf.tsx";
 import { SolveLine } from "./panels/solve/solve-line.tsx";
 import { Stage } from "./panels/stage/stage.tsx";
 
+/** How much of the page stands: the describing, then the picture, then the reading. */
+export const unfolded = signal<0 | 1 | 2 | 3>(0);
+
 export function Page() {
+  const pieces = unfolded.value;
   return (
     <>
       <header class="masthead">
@@ -15,20 +20,29 @@ export function Page() {
       </header>
       {reachable.value === false && <Gone />}
       <main>
-        <section class="describe" aria-label="Describe the design">
-          <Sentence />
-        </section>
-        <SolveLine />
-        <Stage />
-        <section class="look" aria-label="What the coil will measure">
-          {answer.value === null ? <NothingYet /> : <Reading result={answer.value.result} />}
-        </section>
+        {pieces === 0 && <p class="nothing">Opening …</p>}
+        {pieces >= 1 && (
+          <section class="describe" aria-label="Describe the design">
+            <Sentence />
+          </section>
+        )}
+        {pieces >= 1 && <SolveLine />}
+        {pieces >= 2 && <Stage />}
+        {pieces >= 3 && <Look />}
       </main>
       <footer>
         Calculated, not measured. Follow local codes; have a qualified person check voltages, fields and
         cooling.
       </footer>
     </>
+  );
+}
+
+function Look() {
+  return (
+    <section class="look" aria-label="What the coil will measure">
+      {answer.value === null ? <NothingYet /> : <Reading result={answer.value.result} />}
+    </section>
   );
 }
 
