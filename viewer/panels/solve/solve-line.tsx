@@ -3,6 +3,7 @@ import { ended, type Job } from "../../../api/contract/job.ts";
 import type { Problem } from "../../../api/contract/problem.ts";
 import { answer, asItWas, asking, asSolved, cancel, job, problem, reachable, solve } from "../../jobs.ts";
 import { faults } from "../../state.ts";
+import { KeyFigures } from "./key-figures.tsx";
 import "./solve-line.css";
 
 export function SolveLine() {
@@ -64,7 +65,10 @@ function Standing() {
   if (inView?.state === "failed") return null;
   if (answer.value === null) return <p class="standing">Nothing solved yet.</p>;
   return asSolved.value ? (
-    <p class="standing">The figures below belong to this design.</p>
+    <div class="standing">
+      <KeyFigures result={answer.value.result} />
+      <p>The figures below belong to this design.</p>
+    </div>
   ) : (
     <p class="standing changed">
       The blanks have changed since the figures below were worked out.{" "}
