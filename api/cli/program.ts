@@ -2,16 +2,20 @@
 import { Command, CommanderError } from "commander";
 import { version } from "../../package.json";
 import { defaults, type ServeOptions } from "../config.ts";
+import { type Solve, startSolver } from "../engine/thread.ts";
 import { exitStatus, type Failure, toFailure, UsageError } from "../errors.ts";
 import { printable } from "../format/sentence.ts";
 import { type SolveOptions, solveCommand } from "./solve.ts";
 
-/** Runs one command line and sets the process's exit status; `entry` is the bundle to start threads from. */
-export async function runProgram(args: readonly string[], entry: URL): Promise<void> {
+/**
+ * Runs one command line and sets the process's exit status; `entry` is the bundle to start threads from, `solver` a thread
+ * started already.
+ */
+export async function runProgram(args: readonly string[], entry: URL, solver?: Solve): Promise<void> {
   catchBrokenPipes();
   const json = args.includes("--json");
   try {
-    await commands(entry).parseAsync(args, { from: "user" });
+    await commands(entry, solver).parseAsync(args, { from: "user" });
   } catch (error) {
     if (error instanceof CommanderError && error.exitCode === 0) return;
     if (error instanceof CommanderError && error.code === "commander.help") {
@@ -48,7 +52,7 @@ function catchBrokenPipes(): void {
   }
 }
 
-function commands(entry: URL): Command {
+function commands(entry: URL, solver?: Solve): Command {
   const program = new Command("emberturn")
     .description(
       "What an induction coil will measure, and where its part gets hot, before the copper is bent.",
@@ -69,7 +73,7 @@ function commands(entry: URL): Command {
     )
     .action((design: string, options: SolveOptions) => {
       endOnSignals();
-      return solveCommand(design, options, entry);
+      return solveCommand(design, options, solver ?? startSolver(entry));
     });
   program
     .command("serve")

@@ -4,11 +4,7 @@ import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { checkDesign } from "../../meshes/check.ts";
 import { readJson } from "../../meshes/json.ts";
 import type { Prediction } from "../../meshes/predict.ts";
-import { solveInThread } from "../engine/thread.ts";
 import { solveCommand } from "./solve.ts";
-
-// What the solver says is given here: the statuses of the command are the matter, and no small design falls short.
-vi.mock("../engine/thread.ts", () => ({ solveInThread: vi.fn() }));
 
 const path = fileURLToPath(new URL("../../meshes/examples/demo.json", import.meta.url));
 const { design } = checkDesign(readJson(readFileSync(path, "utf8")));
@@ -78,10 +74,9 @@ describe("the status of emberturn solve", () => {
     process.exitCode = undefined;
   });
 
-  const solve = (given: Prediction, json: boolean): Promise<void> => {
-    vi.mocked(solveInThread).mockResolvedValueOnce(given);
-    return solveCommand(path, { json }, new URL("file:///"));
-  };
+  // What the solver says is given here: the statuses of the command are the matter, and no small design falls short.
+  const solve = (given: Prediction, json: boolean): Promise<void> =>
+    solveCommand(path, { json }, () => Promise.resolve(given));
 
   it("is 0 when the accuracy holds, with nothing on stderr", async () => {
     await solve(prediction(true), true);

@@ -5,7 +5,7 @@ import { dirname } from "node:path";
 import { checkDesign } from "../../meshes/check.ts";
 import { readJson } from "../../meshes/json.ts";
 import { demandNumbers } from "../engine/finite.ts";
-import { solveInThread } from "../engine/thread.ts";
+import type { Solve } from "../engine/thread.ts";
 import { exitStatus, UsageError } from "../errors.ts";
 import { plain } from "../format/figures.ts";
 import { captionOf } from "./caption.ts";
@@ -20,11 +20,11 @@ export interface SolveOptions {
 }
 
 /** Solves the document at `path` ("-" = standard input) and prints; sets the exit status. Throws what the mapper understands. */
-export async function solveCommand(path: string, options: SolveOptions, entry: URL): Promise<void> {
+export async function solveCommand(path: string, options: SolveOptions, solve: Solve): Promise<void> {
   if (options.picture !== undefined) await checkWritable(options.picture);
   const design = checkDesign(readJson(await readText(path, process.stdin)));
   const line = progressLine(process.stderr);
-  const { result, heat } = await solveInThread(entry, design, line.report).finally(line.close);
+  const { result, heat } = await solve(design, line.report).finally(line.close);
   demandNumbers(result);
   if (options.json) {
     process.stdout.write(`${JSON.stringify(result, null, 2)}\n`);

@@ -1,16 +1,20 @@
 /** The inside of a solving thread: one design in, progress and one answer out. */
-import { parentPort, workerData } from "node:worker_threads";
+import { parentPort } from "node:worker_threads";
 import type { Checked } from "../../meshes/check.ts";
 import { predict } from "../../meshes/predict.ts";
 import { toFailure } from "../errors.ts";
 import type { Message } from "./thread.ts";
 
-/** Solves the thread's `workerData` and posts the answer to the parent. */
+/** Waits for one design, solves it and posts the answer to the parent. */
 export function serveThread(): void {
+  parentPort?.once("message", solve);
+}
+
+function solve(design: Checked): void {
   const post = (message: Message, transfer: ArrayBuffer[] = []): void =>
     parentPort?.postMessage(message, transfer);
   try {
-    const prediction = predict(workerData as Checked, {
+    const prediction = predict(design, {
       progress: (progress) => post({ kind: "progress", ...progress }),
       peakMemoryBytes: () => 1024 * process.resourceUsage().maxRSS,
     });
