@@ -1,4 +1,5 @@
 /** The real command, as a user starts it: bundle, threads, pipes and signals included. */
+
 import { type ChildProcess, spawn } from "node:child_process";
 import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
@@ -6,6 +7,7 @@ import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { afterAll, describe, expect, it } from "vitest";
 import { ResultSchema } from "../../meshes/result.ts";
+import { version } from "../../package.json";
 
 const root = fileURLToPath(new URL("../..", import.meta.url));
 const folder = mkdtempSync(join(tmpdir(), "emberturn-cli-"));
@@ -150,7 +152,7 @@ describe("the bundle", () => {
   it("is built safely by two starts at once, and leaves no draft behind", async () => {
     rmSync(join(root, "dist/emberturn.mjs"), { force: true });
     const both = await Promise.all([run(["--version"]), run(["--version"])]);
-    for (const end of both) expect(end).toEqual({ status: 0, stdout: "0.1.0\n", stderr: "" });
+    for (const end of both) expect(end).toEqual({ status: 0, stdout: `${version}\n`, stderr: "" });
     expect(readdirSync(join(root, "dist")).filter((name) => name.endsWith(".tmp"))).toEqual([]);
   });
 });
