@@ -45,7 +45,7 @@ function Working({ job: working }: { job: Job | null }) {
         Cancel
       </button>
       <progress aria-label="Progress of the solve" max={1} value={working?.progress ?? 0} />
-      <output class="stage" aria-live="polite">
+      <output class="solve-stage" aria-live="polite">
         {stage}
       </output>
     </>
