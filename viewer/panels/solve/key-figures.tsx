@@ -9,7 +9,7 @@ export function KeyFigures({ result: { empty, loaded, power } }: { readonly resu
     <p class="key-figures">
       {loaded === null ? "Empty" : "Loaded"}: R {figure(resistanceOhm, "Ω")}, L {figure(inductanceH, "H")}, Q{" "}
       {figure(q, "")}
-      {heated && `; ${percent(power.efficiency.value)} of the power into the part`}
+      {heated && `; ${percent(power.efficiency.value)} of the power into heated parts`}
     </p>
   );
 }
