@@ -20,8 +20,9 @@ import {
   type Tick,
 } from "../solver/index.ts";
 import type { Built, State } from "./build.ts";
+import { type Fall, type Falls, fallsOf, NEAR, PEAK, surfaceFall } from "./falls.ts";
 import type { Body, Scene } from "./scene.ts";
-import { extentOf } from "./surfaces.ts";
+import { extentOf, sphereSurface } from "./surfaces.ts";
 
 /** A solved state of one grid. */
 export interface Solved {
@@ -37,6 +38,8 @@ export interface PartFigures {
   readonly surfaceH: number;
   readonly surfaceShares: readonly number[];
   readonly surfaceArea: number;
+  /** Regions other than air that its surface meets. */
+  readonly touches: readonly number[];
   readonly peak: number;
   /** Densities a little above and below the peak's share of volume. */
   readonly besidePeak: readonly number[];
@@ -82,14 +85,15 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     body.role === "part" ? [figuresOf(working, body, built.regionOfBody(b))] : [],
   );
   const table = new Table();
-  addTerminals(table, "empty", empty, orderOf(scene.bodies.filter((b) => b.role === "guide")));
-  const order = orderOf(scene.bodies);
-  if (loaded !== null) addTerminals(table, "loaded", loaded, order);
-  addPowers(table, scene, built, working, partFigures, order);
+  addTerminals(table, "empty", empty, fallsOf(scene.bodies.filter((b) => b.role === "guide")));
+  const falls = fallsOf(scene.bodies);
+  if (loaded !== null) addTerminals(table, "loaded", loaded, falls);
+  addPowers(table, scene, built, working, partFigures, falls);
   partFigures.forEach((p, i) => {
-    addPart(table, p, i, order);
+    const touching = scene.bodies.filter((_, b) => p.touches.includes(built.regionOfBody(b)));
+    addPart(table, p, i, falls.power, surfaceFall(p.body, touching, scene.frequency));
   });
-  addStray(table, scene, working, order);
+  addStray(table, scene, working, falls.field);
   const balances = [empty, ...(loaded === null ? [] : [loaded])].map(
     (s) => powerBalance(s.solution, s.losses).active,
   );
@@ -98,7 +102,8 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     unknowns: prepared.system.unknowns,
     values: table.values,
     parts: table.parts,
-    orders: table.orders,
+    falls: table.falls,
+    rounding: table.rounding,
     empty,
     loaded,
     figures: partFigures,
@@ -110,33 +115,22 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
 class Table {
   readonly values = new Map<string, number>();
   readonly parts = new Map<string, readonly number[]>();
+  readonly falls = new Map<string, Fall>();
+  readonly rounding = new Map<string, number>();
 
-  readonly orders = new Map<string, number>();
-
-  add(name: string, value: number, order: number, parts: readonly number[] = [value]): void {
+  add(name: string, value: number, fall: Fall, parts: readonly number[] = [value]): void {
     this.values.set(name, value);
-    this.orders.set(name, order);
+    this.falls.set(name, fall);
     this.parts.set(name, parts);
   }
 }
 
-/** Order at which powers and energies converge at least: slower where magnetic bodies have sharp edges. */
-function orderOf(bodies: readonly Body[]): number {
-  const sharp = bodies.some(
-    (b) => b.material.relativePermeability > 1 && b.pieces.some((p) => p.kind === "polygon"),
-  );
-  return sharp ? 4 / 3 : 2;
-}
-
-/** Order of densities and surface fields: the square of a field that grows as distance^(−1/3) towards an edge sums up slowly. */
-const LOCAL_ORDER = 1 / 2;
-
 /** R as the sum of the regions' powers, X as that of their energies and the energy outside. */
-function addTerminals(table: Table, state: State, { solution, losses }: Solved, order: number): void {
+function addTerminals(table: Table, state: State, { solution, losses }: Solved, falls: Falls): void {
   const { re, im } = solution.impedance;
-  table.add(`${state}.R`, re, order, [...losses.regionPower]);
+  table.add(`${state}.R`, re, falls.resistance, [...losses.regionPower]);
   const reactive = [...losses.regionEnergy, losses.exteriorEnergy].map((w) => 2 * solution.omega * w);
-  table.add(`${state}.X`, im, order, reactive);
+  table.add(`${state}.X`, im, falls.energy, reactive);
 }
 
 /** Powers of coil, heated parts and the rest, each part and guide by its slices. */
@@ -146,7 +140,7 @@ function addPowers(
   built: Built,
   working: Solved,
   figures: readonly PartFigures[],
-  order: number,
+  falls: Falls,
 ): void {
   const { losses } = working;
   const slices = (heated: boolean): number[] =>
@@ -164,7 +158,7 @@ function addPowers(
   ];
   for (const [name, powers] of sums) {
     const total = powers.reduce((a, b) => a + b, 0);
-    table.add(name, total, order, powers);
+    table.add(name, total, name === "coil" ? falls.resistance : falls.power, powers);
   }
 }
 
@@ -178,7 +172,8 @@ function figuresOf({ solution, losses }: Solved, body: Body, region: number): Pa
     power,
     surfaceH: surface.rms,
     surfaceShares: surface.shares,
-    surfaceArea: surface.area,
+    surfaceArea: sphereSurface(body) ?? surface.area,
+    touches: surface.touches,
     peak: hot?.density ?? 0,
     besidePeak: hot?.beside ?? [],
     hotSpot: hot === null ? null : [hot.r, hot.z],
@@ -193,32 +188,36 @@ function slicesOf({ solution, losses }: Solved, body: Body, region: number, powe
   return power > 0 ? [...sliceShares(solution, losses, [region], heights)] : heights.slice(1).map(() => 0);
 }
 
-function addPart(table: Table, p: PartFigures, i: number, order: number): void {
+function addPart(table: Table, p: PartFigures, i: number, power: Fall, surface: Fall): void {
   table.add(
     `part${i}.power`,
     p.power,
-    order,
+    power,
     p.slices.map((s) => s * p.power),
   );
-  table.add(`part${i}.surfaceH`, p.surfaceH, LOCAL_ORDER, p.surfaceShares);
+  table.add(`part${i}.surfaceH`, p.surfaceH, surface, p.surfaceShares);
   const near = [p.peak, ...p.besidePeak];
   table.add(
     `part${i}.peak`,
     p.peak,
-    LOCAL_ORDER,
+    PEAK,
     near.map((d) => d / near.length),
   );
 }
 
 /** By summing over all ring sources; at points too near to one, from the cell that holds the point, which converges slower. */
-function addStray(table: Table, scene: Scene, { solution }: Solved, order: number): void {
+function addStray(table: Table, scene: Scene, { solution }: Solved, fall: Fall): void {
   if (scene.strayPoints.length === 0) return;
   const rings = ringSources(solution);
-  const probe = makeProbe(solution);
+  let probe: ReturnType<typeof makeProbe> | undefined;
+  const inCell: ReturnType<typeof makeProbe> = (r, z) => {
+    probe ??= makeProbe(solution);
+    return probe(r, z);
+  };
   scene.strayPoints.forEach(([r, z], i) => {
     const clear = fieldOfRings(rings, r, z);
-    const { br, bz } = clear ?? probe(r, z);
+    const { br, bz } = clear ?? inCell(r, z);
     const components = [br.re, br.im, bz.re, bz.im];
-    table.add(`stray${i}`, Math.hypot(...components), clear === null ? LOCAL_ORDER : order, components);
+    table.add(`stray${i}`, Math.hypot(...components), clear === null ? NEAR : fall, components);
   });
 }

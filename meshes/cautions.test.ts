@@ -29,6 +29,7 @@ function part(surfaceH: number, peak: number, material: Partial<SceneMaterial> =
     power: 1,
     surfaceH,
     surfaceArea: 1,
+    touches: [],
     peak,
     hotSpot: null,
     slices: [],

@@ -5,6 +5,7 @@
  */
 import { countNodes, cutGrid, type GridAnswer, MU0, prepare, refine, solveState } from "../solver/index.ts";
 import { build } from "./build.ts";
+import { fallsOf } from "./falls.ts";
 import { FARTHEST } from "./leads.ts";
 import type { Scene } from "./scene.ts";
 
@@ -48,6 +49,7 @@ export function leadPair(scene: Scene): LeadPair {
   };
   const built = build(pair);
   const materials = built.materials("empty");
+  const falls = fallsOf([]);
   const omega = 2 * Math.PI * scene.frequency;
   const solveAt = (level: number): GridAnswer => {
     const prepared = prepare(
@@ -63,9 +65,9 @@ export function leadPair(scene: Scene): LeadPair {
         ["X", impedance.im],
       ]),
       parts: new Map(),
-      orders: new Map([
-        ["R", 2],
-        ["X", 2],
+      falls: new Map([
+        ["R", falls.resistance],
+        ["X", falls.energy],
       ]),
     };
   };

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { Body, Piece, Point } from "./scene.ts";
-import { extentOf, surfaceDistance } from "./surfaces.ts";
+import { extentOf, meanThickness, sphereSurface, surfaceDistance } from "./surfaces.ts";
 
 const body = (...pieces: Piece[]): Body => ({
   name: "piece",
@@ -77,5 +77,21 @@ describe("extent", () => {
   it("of a sphere reaches the axis", () => {
     const found = extentOf(body({ kind: "sphere", centreZ: 3, radius: 5 }));
     expect(found).toEqual({ low: -2, high: 8, inner: 0, outer: 5 });
+  });
+});
+
+describe("thickness and surface", () => {
+  it("a long rod is as thick as its diameter, a wide ring as its height, both from below", () => {
+    expect(meanThickness(body(box(0, 10, -5000, 5000)))).toBeCloseTo(20, 1);
+    expect(meanThickness(body(box(5000, 9000, 0, 10)))).toBeCloseTo(10, 1);
+    expect(meanThickness(body(box(0, 10, -30, 30)))).toBeLessThan(20);
+  });
+
+  it("of a ball: as thick as its radius (half a circle over its arc), surface 4πa²; pieces add up", () => {
+    const ball: Piece = { kind: "sphere", centreZ: 3, radius: 5 };
+    expect(meanThickness(body(ball))).toBeCloseTo(5, 12);
+    expect(sphereSurface(body(ball))).toBeCloseTo(100 * Math.PI, 10);
+    expect(sphereSurface(body(ball, { ...ball, centreZ: 13 }))).toBeCloseTo(200 * Math.PI, 10);
+    expect(sphereSurface(body(box(0, 10, -30, 30)))).toBeNull();
   });
 });

@@ -17,7 +17,7 @@ export { countNodes, cutGrid } from "./grid/cut.ts";
 export { type ArcOfEdge, makePatchMesh, tensorPatches } from "./grid/patches.ts";
 export { type MaterialState, materialAt, materialIds, materials } from "./materials/catalogue.ts";
 export type { Cited, LinearResistivity, MaterialRecord, ResistivityLaw } from "./materials/laws.ts";
-export { type GridAnswer, type Refined, refine } from "./refine.ts";
+export { type Fall, type GridAnswer, type Refined, refine, remaining } from "./refine.ts";
 export type {
   Circuit,
   Complex,

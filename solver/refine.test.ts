@@ -1,20 +1,28 @@
 import { describe, expect, it } from "vitest";
-import { barsBetween, type GridAnswer, nextLevel, refine } from "./refine.ts";
+import { barsBetween, type Fall, type GridAnswer, nextLevel, refine, remaining } from "./refine.ts";
+
+const SLOW: Fall = { order: 2, share: 1 };
 
 /** What a grid of level n would say of a quantity whose error is a n⁻⁴ + b n^(−p), and of its two parts. */
-function answer(level: number, truth: number, a: number, b: number, order: number): GridAnswer {
+function answer(level: number, truth: number, a: number, b: number, fall: Fall): GridAnswer {
   const smooth = a / level ** 4;
-  const sharp = b / level ** order;
+  const sharp = b / level ** fall.order;
   return {
     level,
     unknowns: 100 * level ** 2,
     values: new Map([["q", truth + smooth + sharp]]),
     parts: new Map([["q", [truth / 2 + smooth, truth / 2 + sharp]]]),
-    orders: new Map([["q", order]]),
+    falls: new Map([["q", fall]]),
   };
 }
 
 const error = (x: GridAnswer, truth: number): number => Math.abs((x.values.get("q") ?? 0) - truth);
+const LEVELS = [
+  [1, 2],
+  [2, 3],
+  [2, 4],
+  [3, 5],
+] as const;
 
 describe("bars from two grids", () => {
   it.each([
@@ -24,13 +32,10 @@ describe("bars from two grids", () => {
     [1, -0.2, 4 / 3],
     [-0.3, 1, 4 / 3],
     [0, 1, 1 / 2],
-  ])("hold where the error is %d n⁻⁴ and %d n^−p, p = %d", (a, b, order) => {
-    for (const [m, n] of [
-      [1, 2],
-      [2, 3],
-      [2, 4],
-    ] as const) {
-      const [coarse, fine] = [answer(m, 10, a, b, order), answer(n, 10, a, b, order)];
+  ])("hold where the error is %d n⁻⁴ and %d n^−p, p = %d, whatever the slow part's share", (a, b, order) => {
+    const fall = { order, share: 1 };
+    for (const [m, n] of LEVELS) {
+      const [coarse, fine] = [answer(m, 10, a, b, fall), answer(n, 10, a, b, fall)];
       const bar = barsBetween(coarse, fine).get("q") ?? 0;
       expect(bar * (1 + 1e-12)).toBeGreaterThanOrEqual(error(fine, 10));
       // Not padded: within a factor of what the larger part of the error could be.
@@ -38,18 +43,62 @@ describe("bars from two grids", () => {
     }
   });
 
+  it.each([
+    [2, 0.4],
+    [4 / 3, 0.45],
+    [4 / 3, 2 / 3],
+    [1 / 3, 1 / 4],
+  ])(
+    "are the error itself where it falls just as said: order %d, share %d of the first movement",
+    (order, share) => {
+      // Movements from level 1 to 2: a (1 − 2⁻⁴) = 1 − share and b (1 − 2^−p) = share.
+      const a = (1 - share) / (1 - 2 ** -4);
+      const b = share / (1 - 2 ** -order);
+      for (const [m, n] of LEVELS) {
+        const [coarse, fine] = [m, n].map((level) => answer(level, 10, a, b, { order, share })) as [
+          GridAnswer,
+          GridAnswer,
+        ];
+        expect((barsBetween(coarse, fine).get("q") ?? 0) / error(fine, 10)).toBeCloseTo(1, 9);
+      }
+    },
+  );
+
+  it("hold for smaller shares, and are missed for larger ones", () => {
+    const bar = (share: number): number => {
+      const b = share / (1 - 2 ** -2);
+      const a = (1 - share) / (1 - 2 ** -4);
+      const [coarse, fine] = [1, 2].map((n) => answer(n, 10, a, b, { order: 2, share: 0.4 }));
+      return coarse && fine ? (barsBetween(coarse, fine).get("q") ?? 0) / error(fine, 10) : 0;
+    };
+    expect(bar(0)).toBeGreaterThan(2);
+    expect(bar(0.39)).toBeGreaterThan(1);
+    expect(bar(0.41)).toBeLessThan(1);
+  });
+
+  it("with nothing slow are Richardson's of n⁻⁴: a fifteenth of the movement from 1 to 2", () => {
+    expect(remaining({ order: 2, share: 0 }, 1, 2)).toBeCloseTo(1 / 15, 12);
+    expect(remaining({ order: 2, share: 1 }, 1, 2)).toBeCloseTo(1 / 3, 12);
+  });
+
   it("do not vanish where the two parts of the error cancel by chance", () => {
     // a (1 − 2⁻⁴) = b (1 − 2⁻²): level 1 and 2 agree to the last digit, and are both wrong.
     const [a, b] = [1, -(1 - 2 ** -4) / (1 - 2 ** -2)];
-    const [coarse, fine] = [answer(1, 10, a, b, 2), answer(2, 10, a, b, 2)];
+    const fall = { order: 2, share: 0.5 };
+    const [coarse, fine] = [answer(1, 10, a, b, fall), answer(2, 10, a, b, fall)];
     expect((fine.values.get("q") ?? 0) - (coarse.values.get("q") ?? 0)).toBeCloseTo(0, 14);
     expect(barsBetween(coarse, fine).get("q")).toBeGreaterThan(error(fine, 10));
+  });
+
+  it("are never below what the value's rounding takes", () => {
+    const [coarse, fine] = [1, 2].map((n) => answer(n, 0, 0, 0, SLOW)) as [GridAnswer, GridAnswer];
+    expect(barsBetween(coarse, { ...fine, rounding: new Map([["q", 1e-9]]) }).get("q")).toBe(1e-9);
   });
 });
 
 describe("answers without a number", () => {
   const saying = (level: number, q: number): GridAnswer => ({
-    ...answer(level, 10, 1, 1, 2),
+    ...answer(level, 10, 1, 1, SLOW),
     values: new Map([["q", q]]),
   });
 
@@ -62,14 +111,14 @@ describe("answers without a number", () => {
   });
 
   it("nor is a value that has lost its order, or was not there before", () => {
-    const [coarse, fine] = [answer(1, 10, 1, 1, 2), answer(2, 10, 1, 1, 2)];
-    expect(() => barsBetween(coarse, { ...fine, orders: new Map() })).toThrow(/^q is /);
+    const [coarse, fine] = [answer(1, 10, 1, 1, SLOW), answer(2, 10, 1, 1, SLOW)];
+    expect(() => barsBetween(coarse, { ...fine, falls: new Map() })).toThrow(/^q is /);
     expect(() => barsBetween({ ...coarse, values: new Map() }, fine)).toThrow(/^q is /);
   });
 });
 
 describe("refinement", () => {
-  const solveAt = (level: number): GridAnswer => answer(level, 10, 1, 0.1, 2);
+  const solveAt = (level: number): GridAnswer => answer(level, 10, 1, 0.1, SLOW);
   const excess = (asked: number) => (_: GridAnswer, bars: ReadonlyMap<string, number>) =>
     (bars.get("q") ?? 0) / asked;
 

@@ -1,14 +1,29 @@
 /**
  * Solves on nested grids until the asked accuracy holds, and says how far each number may be from the truth.
  *
- * bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) / ((n/m)^p − 1), levels m < n the last two, c_i the parts q is the sum of.
- * An error that falls at least as h^p is bounded by it (Richardson). Smooth fields fall as h⁴ in powers and energies; p = 2 allows for
- * conductors' edges, 4/3 for sharp edges of magnetic bodies (field ∝ distance^(−1/3), energy h^(4/3)), 1/2 for values at a place. Where two
- * parts of the error cancel in q_n − q_m by chance they do not in every c_i. The grid reaches to infinity, so there is no outer boundary to
- * allow for; the direct solution's own error is far below (its residual is reported).
+ * Nine-node cells leave an error of two kinds: a fast one, n⁻⁴ in powers and energies where the field is smooth (n cells along a patch's
+ * edge; twice the order of the cells: Strang and Fix, An Analysis of the Finite Element Method, 3.4, from memory), and a slow one, n^−p,
+ * from edges where the field is not. Of what moves between levels 1 and 2 at most the share φ is owed to the slow one. So
+ *
+ *   e(n) ∝ (1 − φ) n⁻⁴/(1 − 2⁻⁴) + φ n^−p/(1 − 2^−p)
+ *   bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) · e(n)/(e(m) − e(n)),  levels m < n the last two, c_i the parts q is the sum of.
+ *
+ * With φ = 1 that is Richardson's bound for errors that fall at least as n^−p. With a smaller φ the first bar is narrower, and later ones narrow
+ * less than n⁻⁴, as the slow part is what remains. Where two parts of the error cancel in q_n − q_m by chance they do not in every c_i. The
+ * grid reaches to infinity, so there is no outer boundary to allow for; the direct solution's own error is far below (its residual is reported).
  */
 
 import { SolverError } from "./errors.ts";
+
+/** How the error of a number falls: its slow part's order p, and that part's share φ of what moves from level 1 to level 2. */
+export interface Fall {
+  readonly order: number;
+  /** 0 … 1. */
+  readonly share: number;
+}
+
+/** Order of the fast part. */
+const FAST = 4;
 
 /** What one grid says. */
 export interface GridAnswer {
@@ -19,8 +34,10 @@ export interface GridAnswer {
   readonly values: ReadonlyMap<string, number>;
   /** Parts whose sum a value is, where it has any; as many on every grid. */
   readonly parts: ReadonlyMap<string, readonly number[]>;
-  /** Order p at which each value's error falls at least. */
-  readonly orders: ReadonlyMap<string, number>;
+  /** How each value's error falls at the slowest. */
+  readonly falls: ReadonlyMap<string, Fall>;
+  /** Half-widths that a value's rounding alone takes, for those that have any to speak of. */
+  readonly rounding?: ReadonlyMap<string, number>;
 }
 
 export interface Refined<T extends GridAnswer> {
@@ -37,8 +54,8 @@ export function barsBetween(coarse: GridAnswer, fine: GridAnswer): Map<string, n
   for (const [name, value] of fine.values) {
     const before = coarse.values.get(name) ?? Number.NaN;
     const moved = partsMoved(coarse.parts.get(name), fine.parts.get(name));
-    const shrink = (fine.level / coarse.level) ** (fine.orders.get(name) ?? Number.NaN) - 1;
-    const bar = Math.max(Math.abs(value - before), moved) / shrink;
+    const left = remaining(fine.falls.get(name), coarse.level, fine.level);
+    const bar = Math.max(Math.abs(value - before), moved) * left + (fine.rounding?.get(name) ?? 0);
     // A bar that is no number would never shrink, and no level would be the next.
     if (!Number.isFinite(bar)) throw new SolverError("number", `${name} is ${value} after ${before}`);
     bars.set(name, bar);
@@ -46,12 +63,21 @@ export function barsBetween(coarse: GridAnswer, fine: GridAnswer): Map<string, n
   return bars;
 }
 
+/** What is left of an error at level n over what moved since level m; NaN where nobody says how it falls. */
+export function remaining(fall: Fall | undefined, m: number, n: number): number {
+  if (fall === undefined) return Number.NaN;
+  const { order, share } = fall;
+  const error = (level: number): number =>
+    ((1 - share) * level ** -FAST) / (1 - 2 ** -FAST) + (share * level ** -order) / (1 - 2 ** -order);
+  return error(n) / (error(m) - error(n));
+}
+
 function partsMoved(before: readonly number[] | undefined, after: readonly number[] | undefined): number {
   if (before === undefined || after === undefined) return 0;
   return after.reduce((sum, c, i) => sum + Math.abs(c - before[i]), 0);
 }
 
-/** Level to solve next when `bars` must shrink by `factor`: bars fall at least as n^−p, usually as n⁻³ or better. */
+/** Level to solve next when `bars` must shrink by `factor`: bars usually fall as n⁻³ or better. */
 export function nextLevel(level: number, factor: number): number {
   return Math.max(level + 1, Math.min(2 * level, Math.ceil(level * factor ** (1 / 3))));
 }

@@ -24,6 +24,8 @@ export interface SurfaceField {
   readonly shares: readonly [number, number];
   /** Area of revolution of the surface, m². */
   readonly area: number;
+  /** Regions other than air (0) that meet the surface, in an edge or a node. */
+  readonly touches: readonly number[];
   /** Greatest |H_t| at a node (a corner of a magnetic part has no finite one), A/m, and where, m. */
   readonly peak: number;
   readonly peakR: number;
@@ -75,6 +77,7 @@ export function surfaceField(solution: Solution, regions: readonly number[]): Su
     rms,
     shares: [shareOf(along), shareOf(across)],
     area: chain.area,
+    touches: touchedBy(solution, regions, chain),
     peak: Math.hypot(hRe[at], hIm[at]),
     peakR: grid.r[at],
     peakZ: grid.z[at],
@@ -104,6 +107,20 @@ function chainOf(solution: Solution, regions: readonly number[], cells: readonly
   let area = 0;
   for (let e = 0; e < edges; e++) area += integrateEdge(grid.r, grid.z, chain, e);
   return { ...chain, area };
+}
+
+/** Regions whose cells share a node with the chain, by number; the part's own and air left out. */
+function touchedBy(solution: Solution, regions: readonly number[], chain: Chain): number[] {
+  const { grid } = solution.prepared;
+  const onChain = new Uint8Array(grid.r.length);
+  for (const i of chain.nodes) onChain[i] = 1;
+  const found = new Set<number>();
+  for (let c = 0; c < grid.cellRegion.length; c++) {
+    const region = grid.cellRegion[c];
+    if (region === 0 || regions.includes(region)) continue;
+    for (let i = 0; i < NODES; i++) if (onChain[grid.cellNodes[c * NODES + i]] === 1) found.add(region);
+  }
+  return [...found].sort((a, b) => a - b);
 }
 
 const Q = new Float64Array(9);

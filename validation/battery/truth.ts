@@ -4,7 +4,7 @@
  * frequency, so with thicker and deeper layers and other triangles between, that a fault of one grid is not its own truth. (As if for a higher
  * one its layers would end where the field is not gone yet: 1.6 times moved powers of thin-skinned magnetic parts by 3e-5.)
  *
- *   doubt(q) = |q_n − q_(n−1)| / ((n/(n−1))^p − 1), p the order q falls at least with (solver/refine.ts).
+ *   doubt(q) = |q_n − q_(n−1)| · e(n)/(e(n−1) − e(n)), e how q's error falls at the slowest (solver/refine.ts).
  *
  * The result is put together here from the solver's values, not by `predict`, so that a slip there shows as well.
  */
@@ -19,7 +19,7 @@ import type { Scene } from "../../meshes/scene.ts";
 import { extentOf, surfaceDistance } from "../../meshes/surfaces.ts";
 import { sure, type Uncertain } from "../../meshes/uncertain.ts";
 import { mmFromMetres } from "../../meshes/units.ts";
-import { countNodes, sharesBelow } from "../../solver/index.ts";
+import { countNodes, type Fall, remaining, sharesBelow } from "../../solver/index.ts";
 import { closedForms } from "./closed.ts";
 import type { Entry } from "./designs/index.ts";
 import { type Figures, listed, type PartOfFigures } from "./figures.ts";
@@ -66,9 +66,8 @@ export function truthOf(entry: Entry): Truth {
   const fine = listed(figuresOf(scene, answer, pair));
   const barred: Record<string, readonly [number, number]> = {};
   for (const [path, { value }] of fine.barred) {
-    const shrink = (level / (level - 1)) ** orderOf(answer, path) - 1;
     const was = before.barred.get(path)?.value ?? Number.NaN;
-    barred[path] = [value, Math.abs(value - was) / shrink];
+    barred[path] = [value, Math.abs(value - was) * remaining(fallOf(answer, path), level - 1, level)];
   }
   const closed = closedForms(entry.id, scene);
   for (const [path, { value, plusMinus }] of closed) barred[path] = [value, plusMinus];
@@ -90,8 +89,8 @@ function levelOf(built: Built, free: number): number {
   return level;
 }
 
-/** Order a figure converges at, from the solver's values it is made of. */
-function orderOf(answer: Answer, path: string): number {
+/** How a figure's error falls, from the solver's values it is made of. */
+function fallOf(answer: Answer, path: string): Fall | undefined {
   const state = answer.loaded === null ? "empty" : "loaded";
   const [head, index, last] = path.split(".");
   const named =
@@ -104,7 +103,7 @@ function orderOf(answer: Answer, path: string): number {
           : head === "empty"
             ? "empty.R"
             : `${state}.R`;
-  return answer.orders.get(named) ?? Number.NaN;
+  return answer.falls.get(named);
 }
 
 /** The result of one grid, without bars. */
