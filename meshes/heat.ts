@@ -14,10 +14,11 @@ const MOST_ALONG = 4;
 export function heatMap(scene: Scene, answer: Answer, current: number): HeatMap {
   const { solution } = answer.loaded ?? answer.empty;
   const { grid } = solution.prepared;
+  const square = current ** 2;
   const { outlines, outlineOfRegion } = outlinesOf(scene);
   const cells = Array.from(grid.cellRegion.keys()).filter((c) => (grid.cellRegion[c] ?? 0) > 0);
   const m = Math.min(MOST_ALONG, Math.max(1, Math.floor(Math.sqrt(PIECES / cells.length))));
-  const read = heatSampler(solution, m);
+  const read = heatSampler(solution, m, "middles");
   const corners = new Float64Array(8 * m * m * cells.length);
   const density = new Float64Array(m * m * cells.length);
   const outline = new Int32Array(m * m * cells.length);
@@ -25,23 +26,25 @@ export function heatMap(scene: Scene, answer: Answer, current: number): HeatMap 
     const samples = read(c);
     const first = m * m * i;
     outline.fill(outlineOfRegion[grid.cellRegion[c] ?? 0] ?? 0, first, first + m * m);
-    density.set(
-      samples.density.map((p) => p * current ** 2),
-      first,
-    );
+    for (let p = 0; p < m * m; p++) density[first + p] = (samples.density[p] ?? 0) * square;
     putCorners(samples, m, corners, 8 * first);
   });
   return { corners, density, outline, outlines };
 }
 
+/** Steps along ξ and η from a piece's first corner. */
+const CORNER_R = [0, 1, 1, 0];
+const CORNER_Z = [0, 0, 1, 1];
+
 /** Four corners a piece, counter-clockwise, from the lattice of (m + 1)² corners. */
 function putCorners({ cornerR, cornerZ }: CellSamples, m: number, out: Float64Array, first: number): void {
   for (let piece = 0; piece < m * m; piece++) {
     const low = piece + Math.floor(piece / m);
-    [low, low + 1, low + m + 2, low + m + 1].forEach((corner, k) => {
+    for (let k = 0; k < 4; k++) {
+      const corner = low + (CORNER_R[k] ?? 0) + (CORNER_Z[k] ?? 0) * (m + 1);
       out[first + 8 * piece + 2 * k] = cornerR[corner] ?? 0;
       out[first + 8 * piece + 2 * k + 1] = cornerZ[corner] ?? 0;
-    });
+    }
   }
 }
 

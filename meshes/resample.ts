@@ -99,7 +99,7 @@ function readCells(
   const currentDensity = new Float64Array((nr - 1) * (nz - 1));
   const hot = Array.from(grid.cellRegion.keys()).filter((c) => (losses.cellPower[c] ?? 0) > 0);
   const m = Math.min(MOST_ALONG, Math.max(1, Math.floor(Math.sqrt(PIECES / hot.length))));
-  const read = heatSampler(solution, m);
+  const read = heatSampler(solution, m, "middles");
   const split = ringSplitter(lines.r.at, lines.z.at);
   const corners = new Float64Array(8);
   let [watts, squares] = [0, 0];

@@ -20,7 +20,7 @@ export function badPatches(mesh: PatchMesh): BadCell[] {
 
 /** True when the corner between two sides, the second counter-clockwise of the first, is neither turned over nor flat. */
 function isSound(ur: number, uz: number, vr: number, vz: number): boolean {
-  return ur * vz - uz * vr > LEAST_SINE * Math.hypot(ur, uz) * Math.hypot(vr, vz);
+  return ur * vz - uz * vr > LEAST_SINE * Math.sqrt((ur * ur + uz * uz) * (vr * vr + vz * vz));
 }
 
 /** Patches whose edges leave a corner in one line or turned over: what cells at the corner tend to. */

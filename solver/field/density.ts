@@ -31,13 +31,21 @@ export interface CellSamples {
   readonly cornerDensity: Float64Array;
 }
 
-/** Reads m × m pieces of a cell inside the outer circle. */
-export function heatSampler(solution: Solution, m: number): (cell: number) => CellSamples {
+/** Where densities are wanted; the others are not read, and their numbers mean nothing. */
+export type Wanted = "middles" | "corners" | "both";
+
+/** Reads m × m pieces of a cell inside the outer circle. Places and volumes are always there, `joule` with the middles' densities. */
+export function heatSampler(
+  solution: Solution,
+  m: number,
+  wanted: Wanted = "both",
+): (cell: number) => CellSamples {
   const { grid, system } = solution.prepared;
   const middles = innerTables(grid, ...lattice(m, 1 - 1 / m));
   const corners = innerTables(grid, ...lattice(m + 1, 1));
   const drawnIn = innerTables(grid, ...lattice(m + 1, 1 - DRAWN_IN));
   const out = emptySamples(m);
+  const cornerJoule = new Float64Array(out.cornerDensity.length);
   const s = new Float64Array(NODES);
   const z = new Float64Array(NODES);
   const re = new Float64Array(NODES);
@@ -51,15 +59,17 @@ export function heatSampler(solution: Solution, m: number): (cell: number) => Ce
     }
     const region = grid.cellRegion[cell];
     const turn = system.turnOfCell[cell];
-    const [uRe, uIm] = turn < 0 ? [0, 0] : [solution.u.re[turn], solution.u.im[turn]];
+    const uRe = turn < 0 ? 0 : solution.u.re[turn];
+    const uIm = turn < 0 ? 0 : solution.u.im[turn];
     gather(solution.psi, grid.cellNodes, cell * NODES, uRe, uIm, re, im);
     reluctivityOf(solution, region, cell, nu);
     const joule = solution.omega ** 2 * solution.materials[region].conductivity;
     const lag = (solution.omega * nu[1]) / MU0;
     const heat = { s, z, re, im, joule, lag };
-    readPoints(middles(cell), heat, out.r, out.z, out.density, out);
-    for (let p = 0; p < out.volume.length; p++) out.volume[p] *= (4 * Math.PI) / (m * m);
-    readPoints(drawnIn(cell), heat, out.cornerR, out.cornerZ, out.cornerDensity, null);
+    const inside = middles(cell);
+    readVolumes(inside.geometry, s, z, (4 * Math.PI) / (m * m), out);
+    if (wanted !== "corners") readDensities(inside, heat, out.density, out.joule);
+    if (wanted !== "middles") readDensities(drawnIn(cell), heat, out.cornerDensity, cornerJoule);
     readPlaces(corners(cell).geometry, s, z, out.cornerR, out.cornerZ);
     return out;
   };
@@ -104,21 +114,22 @@ interface CellHeat {
   readonly lag: number;
 }
 
-/** Places, densities and, where asked for, determinants (as `volume`) and the currents' share at the tables' points. One long loop: runs for every sample of a part. */
-function readPoints(
-  tables: CellTables,
-  heat: CellHeat,
-  outR: Float64Array,
-  outZ: Float64Array,
-  density: Float64Array,
-  also: { readonly volume: Float64Array; readonly joule: Float64Array } | null,
+/** Places and volumes of the pieces; `whole` times the determinant is a piece's volume. */
+function readVolumes(
+  { n, dXi, dEta }: ShapeTable,
+  s: Float64Array,
+  z: Float64Array,
+  whole: number,
+  out: CellSamples,
 ): void {
-  const { n, dXi, dEta } = tables.geometry;
-  const { field } = tables;
-  const { s, z, re, im, joule, lag } = heat;
+  const { r: outR, z: outZ, volume } = out;
   for (let p = 0; p < outR.length; p++) {
-    let [sp, zp, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0, 0];
-    let [x, y, xXi, xEta, yXi, yEta] = [0, 0, 0, 0, 0, 0];
+    let sp = 0;
+    let zp = 0;
+    let sXi = 0;
+    let sEta = 0;
+    let zXi = 0;
+    let zEta = 0;
     for (let i = 0; i < NODES; i++) {
       const k = p * NODES + i;
       sp += n[k] * s[i];
@@ -127,22 +138,62 @@ function readPoints(
       sEta += dEta[k] * s[i];
       zXi += dXi[k] * z[i];
       zEta += dEta[k] * z[i];
-      x += field.n[k] * re[i];
-      y += field.n[k] * im[i];
+    }
+    outR[p] = Math.sqrt(sp);
+    outZ[p] = zp;
+    volume[p] = whole * (sXi * zEta - sEta * zXi);
+  }
+}
+
+/** What currents make, and what the lag adds, at the tables' points. */
+function readDensities(tables: CellTables, heat: CellHeat, density: Float64Array, joule: Float64Array): void {
+  const { n } = tables.geometry;
+  const field = tables.field.n;
+  const { s, re, im } = heat;
+  for (let p = 0; p < density.length; p++) {
+    let sp = 0;
+    let x = 0;
+    let y = 0;
+    for (let i = 0; i < NODES; i++) {
+      const k = p * NODES + i;
+      sp += n[k] * s[i];
+      x += field[k] * re[i];
+      y += field[k] * im[i];
+    }
+    joule[p] = (heat.joule * (x * x + y * y)) / sp;
+    density[p] = joule[p];
+  }
+  if (heat.lag !== 0) addLag(tables, heat, density);
+}
+
+/** The lag's part of the density. One long loop over all sums it takes. */
+function addLag(tables: CellTables, heat: CellHeat, density: Float64Array): void {
+  const { n, dXi, dEta } = tables.geometry;
+  const { field } = tables;
+  const { s, z, re, im, lag } = heat;
+  for (let p = 0; p < density.length; p++) {
+    let sp = 0;
+    let sXi = 0;
+    let sEta = 0;
+    let zXi = 0;
+    let zEta = 0;
+    let xXi = 0;
+    let xEta = 0;
+    let yXi = 0;
+    let yEta = 0;
+    for (let i = 0; i < NODES; i++) {
+      const k = p * NODES + i;
+      sp += n[k] * s[i];
+      sXi += dXi[k] * s[i];
+      sEta += dEta[k] * s[i];
+      zXi += dXi[k] * z[i];
+      zEta += dEta[k] * z[i];
       xXi += field.dXi[k] * re[i];
       xEta += field.dEta[k] * re[i];
       yXi += field.dXi[k] * im[i];
       yEta += field.dEta[k] * im[i];
     }
     const det = sXi * zEta - sEta * zXi;
-    outR[p] = Math.sqrt(sp);
-    outZ[p] = zp;
-    density[p] = (joule * (x * x + y * y)) / sp;
-    if (also !== null) {
-      also.volume[p] = det;
-      also.joule[p] = density[p];
-    }
-    if (lag === 0) continue;
     const bySquares = (xXi * zEta - xEta * zXi) ** 2 + (yXi * zEta - yEta * zXi) ** 2;
     const byHeights = (xEta * sXi - xXi * sEta) ** 2 + (yEta * sXi - yXi * sEta) ** 2;
     density[p] += (lag * (4 * bySquares + byHeights / sp)) / (det * det);

@@ -48,7 +48,8 @@ export function sharesBelow(
 ): Float64Array {
   const { grid } = solution.prepared;
   const below = new Float64Array(thresholds.length);
-  const read = heatSampler(solution, PIECES);
+  const read = heatSampler(solution, PIECES, "corners");
+  const atNode = new Float64Array(grid.r.length).fill(Number.NaN);
   let total = 0;
   for (const cell of cellsOf(solution, regions)) {
     const power = losses.cellPower[cell];
@@ -57,9 +58,9 @@ export function sharesBelow(
     let most = -Infinity;
     for (let i = 0; i < NODES; i++) {
       const node = grid.cellNodes[cell * NODES + i];
-      const value = level(grid.r[node], grid.z[node]);
-      least = Math.min(least, value);
-      most = Math.max(most, value);
+      if (Number.isNaN(atNode[node])) atNode[node] = level(grid.r[node], grid.z[node]);
+      least = Math.min(least, atNode[node]);
+      most = Math.max(most, atNode[node]);
     }
     const slack = MARGIN * (most - least);
     const cut = thresholds.some((t) => t > least - slack && t < most + slack);
@@ -96,10 +97,11 @@ function addCut(
     const low = (cornerDensity[corners[0]] + cornerDensity[corners[1]]) / 2;
     const high = (cornerDensity[corners[2]] + cornerDensity[corners[3]]) / 2;
     sampled += (volume[p] * (low + high)) / 2;
-    thresholds.forEach((t, i) => {
+    for (let i = 0; i < thresholds.length; i++) {
+      const t = thresholds[i];
       const f = spread > 0 ? Math.min(1, Math.max(0, (t - least) / spread)) : t >= least ? 1 : 0;
       part[i] += volume[p] * f * (low + ((high - low) * f) / 2);
-    });
+    }
   }
   if (!(sampled > 0)) return;
   for (let i = 0; i < below.length; i++) below[i] += (power * part[i]) / sampled;
@@ -153,11 +155,11 @@ export interface HotSpot {
 
 /** Pieces: the place of the hottest corner, and the densities between which each lies. */
 interface Pieces {
-  readonly r: number[];
-  readonly z: number[];
-  readonly volume: number[];
-  readonly least: number[];
-  readonly most: number[];
+  readonly r: Float64Array;
+  readonly z: Float64Array;
+  readonly volume: Float64Array;
+  readonly least: Float64Array;
+  readonly most: Float64Array;
 }
 
 /**
@@ -171,7 +173,7 @@ export function quantileDensity(solution: Solution, regions: readonly number[], 
   const floor = WORTH_A_LOOK * upperQuantile(coarse, tail);
   const perCell = COARSE * COARSE;
   const hottest = cells.filter((_cell, i) =>
-    coarse.most.slice(i * perCell, (i + 1) * perCell).some((d) => d >= floor),
+    coarse.most.subarray(i * perCell, (i + 1) * perCell).some((d) => d >= floor),
   );
   const fine = piecesOf(solution, hottest, PIECES);
   const density = upperQuantile(fine, tail);
@@ -181,18 +183,26 @@ export function quantileDensity(solution: Solution, regions: readonly number[], 
 }
 
 function piecesOf(solution: Solution, cells: readonly number[], m: number): Pieces {
-  const read = heatSampler(solution, m);
-  const pieces: Pieces = { r: [], z: [], volume: [], least: [], most: [] };
+  const read = heatSampler(solution, m, "corners");
+  const numbers = (): Float64Array => new Float64Array(cells.length * m * m);
+  const pieces: Pieces = {
+    r: numbers(),
+    z: numbers(),
+    volume: numbers(),
+    least: numbers(),
+    most: numbers(),
+  };
+  let at = 0;
   for (const cell of cells) {
     const samples = read(cell);
-    for (let p = 0; p < samples.r.length; p++) {
+    for (let p = 0; p < samples.volume.length; p++) {
       const corners = cornersOf(p, m);
       sortFour(corners, samples.cornerDensity);
-      pieces.r.push(samples.cornerR[corners[3]]);
-      pieces.z.push(samples.cornerZ[corners[3]]);
-      pieces.volume.push(samples.volume[p]);
-      pieces.least.push(samples.cornerDensity[corners[0]]);
-      pieces.most.push(samples.cornerDensity[corners[3]]);
+      pieces.r[at] = samples.cornerR[corners[3]];
+      pieces.z[at] = samples.cornerZ[corners[3]];
+      pieces.volume[at] = samples.volume[p];
+      pieces.least[at] = samples.cornerDensity[corners[0]];
+      pieces.most[at++] = samples.cornerDensity[corners[3]];
     }
   }
   return pieces;
@@ -207,12 +217,13 @@ function volumeAbove(pieces: Pieces, i: number, density: number): number {
 
 /** The density that the volume `tail` exceeds, by halving. */
 function upperQuantile(pieces: Pieces, tail: number): number {
+  const count = pieces.volume.length;
   let low = 0;
   let high = pieces.most.reduce((a, b) => Math.max(a, b), 0);
   for (let k = 0; k < HALVINGS; k++) {
     const middle = (low + high) / 2;
     let above = 0;
-    for (let i = 0; i < pieces.volume.length; i++) above += volumeAbove(pieces, i, middle);
+    for (let i = 0; i < count; i++) above += volumeAbove(pieces, i, middle);
     if (above > tail) low = middle;
     else high = middle;
   }
@@ -221,7 +232,11 @@ function upperQuantile(pieces: Pieces, tail: number): number {
 
 /** The piece nearest to the middle of the volume above a density, if it lies near; else the hottest. */
 function placeOf(pieces: Pieces, density: number): number {
-  let [volume, r, z, spread, hottest] = [0, 0, 0, 0, 0];
+  let volume = 0;
+  let r = 0;
+  let z = 0;
+  let spread = 0;
+  let hottest = 0;
   const listed: number[] = [];
   for (let i = 0; i < pieces.volume.length; i++) {
     if (pieces.most[i] > pieces.most[hottest]) hottest = i;

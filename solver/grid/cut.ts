@@ -118,25 +118,32 @@ function fillLattice(
 /** Coons map of the boundary nodes onto the inner nodes of one lattice. */
 function blendInterior(lattice: Int32Array, side: number, r: Float64Array, z: Float64Array): void {
   const last = side - 1;
-  const blend = (x: Float64Array, i: number, j: number): number => {
-    const u = i / last;
-    const v = j / last;
-    const at = (ii: number, jj: number): number => x[lattice[jj * side + ii]];
-    const edges = (1 - v) * at(i, 0) + v * at(i, last) + (1 - u) * at(0, j) + u * at(last, j);
-    const corners =
-      (1 - u) * (1 - v) * at(0, 0) +
-      u * (1 - v) * at(last, 0) +
-      u * v * at(last, last) +
-      (1 - u) * v * at(0, last);
-    return edges - corners;
-  };
   for (let j = 1; j < last; j++) {
     for (let i = 1; i < last; i++) {
       const node = lattice[j * side + i];
-      r[node] = blend(r, i, j);
-      z[node] = blend(z, i, j);
+      r[node] = blend(lattice, side, r, i, j);
+      z[node] = blend(lattice, side, z, i, j);
     }
   }
+}
+
+/** One coordinate of the node (i, j). */
+function blend(lattice: Int32Array, side: number, x: Float64Array, i: number, j: number): number {
+  const last = side - 1;
+  const top = last * side;
+  const u = i / last;
+  const v = j / last;
+  const edges =
+    (1 - v) * x[lattice[i]] +
+    v * x[lattice[top + i]] +
+    (1 - u) * x[lattice[j * side]] +
+    u * x[lattice[j * side + last]];
+  const corners =
+    (1 - u) * (1 - v) * x[lattice[0]] +
+    u * (1 - v) * x[lattice[last]] +
+    u * v * x[lattice[top + last]] +
+    (1 - u) * v * x[lattice[top]];
+  return edges - corners;
 }
 
 /** Rings of exterior cells from the outer circle (t = 1) to infinity (t = 0). */
