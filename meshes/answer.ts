@@ -4,14 +4,12 @@
  */
 import {
   type CoilSolution,
-  cutGrid,
   fieldOfRings,
   type GridAnswer,
   type Losses,
   lossesOf,
   makeProbe,
   powerBalance,
-  prepareFolded,
   quantileDensity,
   ringSources,
   sliceShares,
@@ -21,6 +19,7 @@ import {
 } from "../solver/index.ts";
 import type { Built, State } from "./build.ts";
 import { type Fall, type Falls, fallsOf, NEAR, PEAK, surfaceFall } from "./falls.ts";
+import { readyAt } from "./ready.ts";
 import type { Body, Scene } from "./scene.ts";
 import { extentOf, sphereSurface } from "./surfaces.ts";
 
@@ -61,16 +60,9 @@ export const SLICES = 8;
 
 /** Solves level n of a built scene. `tick` hears the done fraction and may throw. */
 export function answerAt(scene: Scene, built: Built, level: number, tick: Tick): Answer {
-  const grid = cutGrid(built.mesh, level);
   const hasParts = scene.bodies.some((b) => b.role === "part");
   const share = hasParts ? 0.45 : 0.9;
-  const states = hasParts ? (["empty", "loaded"] as const) : (["empty"] as const);
-  const prepared = prepareFolded(
-    grid,
-    states.map((state) => built.materials(state)),
-    scene.circuit,
-    (f) => tick(0.1 * f),
-  );
+  const prepared = readyAt(scene, built, level, (f) => tick(0.1 * f));
   const omega = 2 * Math.PI * scene.frequency;
   const solve = (state: State, from: number): Solved => {
     const solution = solveState(prepared, { materials: built.materials(state), omega }, scene.circuit, (f) =>
@@ -219,5 +211,7 @@ function addStray(table: Table, scene: Scene, { solution }: Solved, fall: Fall):
     const { br, bz } = clear ?? inCell(r, z);
     const components = [br.re, br.im, bz.re, bz.im];
     table.add(`stray${i}`, Math.hypot(...components), clear === null ? NEAR : fall, components);
+    // Each of the four components by itself.
+    if (clear !== null) table.rounding.set(`stray${i}`, 2 * clear.rounding);
   });
 }

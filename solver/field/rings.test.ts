@@ -106,6 +106,28 @@ describe("one thin ring", () => {
     },
   );
 
+  it.each([0, 0.03, 0.25])(
+    "two opposed ones: nothing along z midway, and the bar of that is rounding, r = %d",
+    (r) => {
+      const [a, b] = [0.1, 0.04];
+      const pair = {
+        sources: Float64Array.from([a, -b, 1.7, 0.3, 0, 0, 0, 0, a, b, -1.7, -0.3, 0, 0, 0, 0]),
+        cells: Float64Array.from([a, -b, 1e-3, a, b, 1e-3]),
+      };
+      const found = fieldOfRings(pair, r, 0);
+      // One of them alone on the axis: µ0 I a²/(2 d³).
+      const scale = (4e-7 * Math.PI * Math.hypot(1.7, 0.3) * a * a) / (2 * Math.hypot(a, b) ** 3);
+      expect(found?.bz).toEqual({ re: 0, im: 0 });
+      expect(found?.rounding).toBeGreaterThan(1e-16 * scale);
+      expect(found?.rounding).toBeLessThan(1e-9 * scale);
+      // Off the axis the pair's field is all radial, and is not lost.
+      if (r > 0) expect(Math.abs(found?.br.re ?? 0)).toBeGreaterThan(0.01 * scale);
+      // A ring stronger by 1e-9 shows.
+      pair.sources[2] *= 1 + 1e-9;
+      if (r < a) expect(Math.abs(fieldOfRings(pair, r, 0)?.bz.re ?? 0)).toBeGreaterThan(0);
+    },
+  );
+
   it("a dipole ring on the axis: the gradient of two opposed rings", () => {
     // m along z equals a small closed loop of current: two rings of radii a ± ε, currents ∓ m/(2ε·2πa)… as ψ of a magnetised shell.
     const [a, z, eps] = [0.1, 0.05, 1e-4];

@@ -30,6 +30,8 @@ const WEIGHT = W.flatMap((w) => W.map((v) => v * w));
 const STEP = 0.02;
 /** Numbers a source: a, z, dI (re, im), M_ρ dV (re, im), M_z dV (re, im). */
 const WIDTH = 8;
+/** Below this part of the sum of all sources' absolute contributions a component is rounding: they cancel, by symmetry as a rule. */
+const LOST = 1e-12;
 /** A point nearer to a cell than this many of its diameters is not clear of it. */
 const CLEAR = 1.5;
 
@@ -60,8 +62,11 @@ export function ringSources(solution: Solution): RingSources {
     let reach = 0;
     for (let i = 0; i < NODES; i++) {
       const node = grid.cellNodes[c * NODES + i];
-      reach = Math.max(reach, Math.hypot(grid.r[node] - grid.r[middle], grid.z[node] - grid.z[middle]));
+      const dr = grid.r[node] - grid.r[middle];
+      const dz = grid.z[node] - grid.z[middle];
+      reach = Math.max(reach, dr * dr + dz * dz);
     }
+    reach = Math.sqrt(reach);
     cells[3 * k] = grid.r[middle];
     cells[3 * k + 1] = grid.z[middle];
     cells[3 * k + 2] = (1 + CLEAR) * reach;
@@ -85,9 +90,18 @@ function makeReader(solution: Solution): (c: number, out: Float64Array, at: numb
     const turn = system.turnOfCell[c];
     reluctivityOf(solution, grid.cellRegion[c], c, nu);
     for (let p = 0; p < POINTS; p++) {
-      let [S, Z, sXi, sEta, zXi, zEta] = [0, 0, 0, 0, 0, 0];
-      let [x, xXi, xEta] = [turn < 0 ? 0 : -u.re[turn], 0, 0];
-      let [y, yXi, yEta] = [turn < 0 ? 0 : -u.im[turn], 0, 0];
+      let S = 0;
+      let Z = 0;
+      let sXi = 0;
+      let sEta = 0;
+      let zXi = 0;
+      let zEta = 0;
+      let x = turn < 0 ? 0 : -u.re[turn];
+      let xXi = 0;
+      let xEta = 0;
+      let y = turn < 0 ? 0 : -u.im[turn];
+      let yXi = 0;
+      let yEta = 0;
       for (let i = 0; i < NODES; i++) {
         const k = p * NODES + i;
         const node = grid.cellNodes[first + i];
@@ -134,31 +148,62 @@ function makeReader(solution: Solution): (c: number, out: Float64Array, at: numb
 function clearance({ cells }: RingSources, r: number, z: number): number {
   let least = Infinity;
   for (let i = 0; i < cells.length; i += 3) {
-    least = Math.min(least, Math.hypot(r - cells[i], z - cells[i + 1]) - cells[i + 2]);
+    const dr = r - cells[i];
+    const dz = z - cells[i + 1];
+    least = Math.min(least, Math.sqrt(dr * dr + dz * dz) - cells[i + 2]);
   }
   return least;
 }
 
-/** B_r and B_z (T) at a point, or null when it is too near to a source for a sum. */
-export function fieldOfRings(rings: RingSources, r: number, z: number): { br: Complex; bz: Complex } | null {
+/** A field (T) summed over sources. */
+export interface RingField {
+  readonly br: Complex;
+  readonly bz: Complex;
+  /** What a component may be off by rounding alone, T; components below it are given as 0. */
+  readonly rounding: number;
+}
+
+/** B at a point, or null when it is too near to a source for a sum. */
+export function fieldOfRings(rings: RingSources, r: number, z: number): RingField | null {
   const clear = clearance(rings, r, z);
   if (clear <= 0) return null;
-  if (r < 1e-9 * clear) return { br: { re: 0, im: 0 }, bz: onAxis(rings.sources, z) };
+  if (r < 1e-9 * clear) {
+    const { re, im, size } = onAxis(rings.sources, z);
+    return told({ re: 0, im: 0 }, { re, im }, LOST * size);
+  }
   const h = STEP * clear;
-  const at = (dr: number, dz: number): Complex => flux(rings.sources, Math.abs(r + dr * h), z + dz * h);
+  let size = 0;
+  const at = (dr: number, dz: number): Complex => {
+    const sum = flux(rings.sources, Math.abs(r + dr * h), z + dz * h);
+    size = Math.max(size, sum.size);
+    return sum;
+  };
   const slope = (dr: number, dz: number): Complex => {
     const [p1, m1, p2, m2] = [at(dr, dz), at(-dr, -dz), at(2 * dr, 2 * dz), at(-2 * dr, -2 * dz)];
     const part = (k: "re" | "im"): number => (8 * (p1[k] - m1[k]) - (p2[k] - m2[k])) / (12 * h);
     return { re: part("re"), im: part("im") };
   };
   const [dr, dz] = [slope(1, 0), slope(0, 1)];
-  return { br: { re: -dz.re / r, im: -dz.im / r }, bz: { re: dr.re / r, im: dr.im / r } };
+  // ψ over the clear distance; a slope's rounding is 1.5/STEP = 75 times that of ψ, which LOST leaves room for.
+  const rounding = (LOST * size) / (clear * r);
+  return told({ re: -dz.re / r, im: -dz.im / r }, { re: dr.re / r, im: dr.im / r }, rounding);
+}
+
+function told(br: Complex, bz: Complex, rounding: number): RingField {
+  const kept = (x: number): number => (Math.abs(x) > rounding ? x : 0);
+  return { br: { re: kept(br.re), im: kept(br.im) }, bz: { re: kept(bz.re), im: kept(bz.im) }, rounding };
+}
+
+/** A sum over sources, and the sum of its terms' absolute values. */
+interface Sum extends Complex {
+  readonly size: number;
 }
 
 /** ψ at (r, z), Wb/rad. Long for the two elliptic integrals in line. */
-function flux(sources: Float64Array, r: number, z: number): Complex {
+function flux(sources: Float64Array, r: number, z: number): Sum {
   let re = 0;
   let im = 0;
+  let size = 0;
   for (let i = 0; i < sources.length; i += WIDTH) {
     const a = sources[i];
     const zeta = sources[i + 1] - z;
@@ -184,16 +229,20 @@ function flux(sources: Float64Array, r: number, z: number): Complex {
     const scale = MU0 / (2 * Math.PI) / root / (2 * Math.PI);
     const bz = scale * (K + ((r * r - a * a - zeta * zeta) / near) * E);
     const br = ((scale * zeta) / a) * (((r * r + a * a + zeta * zeta) / near) * E - K);
-    re += sources[i + 2] * mutual + sources[i + 4] * br + sources[i + 6] * bz;
-    im += sources[i + 3] * mutual + sources[i + 5] * br + sources[i + 7] * bz;
+    const inRe = sources[i + 2] * mutual + sources[i + 4] * br + sources[i + 6] * bz;
+    const inIm = sources[i + 3] * mutual + sources[i + 5] * br + sources[i + 7] * bz;
+    re += inRe;
+    im += inIm;
+    size += Math.abs(inRe) + Math.abs(inIm);
   }
-  return { re, im };
+  return { re, im, size };
 }
 
 /** B_z on the axis. */
-function onAxis(sources: Float64Array, z: number): Complex {
+function onAxis(sources: Float64Array, z: number): Sum {
   let re = 0;
   let im = 0;
+  let size = 0;
   for (let i = 0; i < sources.length; i += WIDTH) {
     const a = sources[i];
     const zeta = z - sources[i + 1];
@@ -202,8 +251,11 @@ function onAxis(sources: Float64Array, z: number): Complex {
     const ring = (MU0 * a * a) / (2 * d3);
     const across = (-3 * MU0 * a * zeta) / (4 * Math.PI * d3 * d2);
     const along = (MU0 * (2 * zeta * zeta - a * a)) / (4 * Math.PI * d3 * d2);
-    re += sources[i + 2] * ring + sources[i + 4] * across + sources[i + 6] * along;
-    im += sources[i + 3] * ring + sources[i + 5] * across + sources[i + 7] * along;
+    const inRe = sources[i + 2] * ring + sources[i + 4] * across + sources[i + 6] * along;
+    const inIm = sources[i + 3] * ring + sources[i + 5] * across + sources[i + 7] * along;
+    re += inRe;
+    im += inIm;
+    size += Math.abs(inRe) + Math.abs(inIm);
   }
-  return { re, im };
+  return { re, im, size };
 }
