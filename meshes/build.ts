@@ -4,8 +4,9 @@
  * mirrored designs get the same grid, and a mirror-symmetric design a mirror-symmetric one.
  */
 import { MU0, type PatchMesh, type RegionMaterial } from "../solver/index.ts";
-import { makeMesh } from "./grid/mesh.ts";
+import { type MeshInput, makeMesh } from "./grid/mesh.ts";
 import { AIR, type RegionTraits, type Shape } from "./grid/shape.ts";
+import { recentMesh } from "./recent.ts";
 import type { Body, Piece, Point, Scene, SceneMaterial, Section } from "./scene.ts";
 
 /** Radius of the meshed half disc in units of the scene's half-size; outside, space is mapped to its end. */
@@ -37,14 +38,17 @@ export function build(scene: Scene): Built {
   const flip = compareSignatures(signature(flipped, traits), signature(scaled, traits)) < 0;
   const chosen = flip ? flipped : scaled;
   const mirrorRegion = findMirror(chosen, traits);
-  const unit = makeMesh({
+  const input: MeshInput = {
     shapes: chosen,
     traits,
     domain: { kind: "open", radius: DOMAIN_RADIUS, mirror: mirrorRegion !== null },
     mirrorRegion: mirrorRegion ?? new Int32Array(traits.length),
-  });
+  };
+  const mesh = recentMesh([input, centre, size, flip, scene.turns.length], () =>
+    placeMesh(makeMesh(input), centre, size, flip),
+  );
   return {
-    mesh: placeMesh(unit, centre, size, flip),
+    mesh,
     regionOfBody: (body) => scene.turns.length + 1 + body,
     materials: (state) => sceneMaterials(scene, state),
   };

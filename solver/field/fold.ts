@@ -3,6 +3,7 @@
  * of the half. With every integral of the weak form halved, a pair of turns k, k' is driven by μ0 I_k on the half and a turn on
  * the plane by μ0 I_k/2; ψ and u are those of the whole. The solution is unfolded, so whoever reads it sees the whole grid.
  */
+import { SolverError } from "../errors.ts";
 import { cellImages, type Half, halve, INNER_IMAGE, OUTER_IMAGE } from "../grid/halve.ts";
 import type { Circuit, Grid, RegionMaterial } from "../types.ts";
 import { touchOfCell } from "./axis.ts";
@@ -12,9 +13,21 @@ import { kindOfCell, NODES } from "./shape.ts";
 import { turnsOfCells } from "./system.ts";
 
 /**
- * As `prepare`; by half where the grid is made of mirrored halves and the circuit and each of `states` (materials by region) are
+ * Whether a grid can be solved by half: made of mirrored halves, with the circuit and each of `states` (materials by region)
  * exactly the same on both sides: senses and paths of turns, materials of regions.
  */
+export function isFoldable(
+  grid: Grid,
+  states: readonly (readonly RegionMaterial[])[],
+  circuit: Circuit,
+): boolean {
+  const cellImage = cellImages(grid);
+  if (cellImage === null) return false;
+  const image = regionImages(grid, cellImage, states[0].length);
+  return states.every((materials) => isEven(materials, image, circuit));
+}
+
+/** As `prepare`, by half where it can be. */
 export function prepareFolded(
   grid: Grid,
   states: readonly (readonly RegionMaterial[])[],
@@ -22,11 +35,17 @@ export function prepareFolded(
   tick?: Tick,
 ): Prepared | Folded {
   const turnOfRegion = states[0].map((m) => m.turn);
+  return isFoldable(grid, states, circuit)
+    ? prepareHalf(grid, turnOfRegion, tick)
+    : prepare(grid, turnOfRegion, tick);
+}
+
+/** As `prepare`, by half. Throws SolverError `structure` where the grid is not made of mirrored halves. */
+export function prepareHalf(grid: Grid, turnOfRegion: readonly number[], tick?: Tick): Folded {
   const cellImage = cellImages(grid);
-  if (cellImage === null || grid.exterior === null) return prepare(grid, turnOfRegion, tick);
+  if (cellImage === null || grid.exterior === null)
+    throw new SolverError("structure", "the grid has no mirrored halves");
   const image = regionImages(grid, cellImage, turnOfRegion.length);
-  if (!states.every((materials) => isEven(materials, image, circuit)))
-    return prepare(grid, turnOfRegion, tick);
   return fold(grid, halve(grid, cellImage, grid.exterior), turnOfRegion, image, tick);
 }
 
