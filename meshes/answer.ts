@@ -77,10 +77,14 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     body.role === "part" ? [figuresOf(working, body, built.regionOfBody(b))] : [],
   );
   const table = new Table();
-  addTerminals(table, "empty", empty, fallsOf(scene.bodies.filter((b) => b.role === "guide")));
   const falls = fallsOf(scene.bodies);
-  if (loaded !== null) addTerminals(table, "loaded", loaded, falls);
-  addPowers(table, scene, built, working, partFigures, falls);
+  const guides = scene.bodies.filter((b) => b.role === "guide");
+  addTerminals(table, "empty", empty, fallsOf(guides), [...empty.losses.regionPower]);
+  const powers = powersOf(scene, built, working, partFigures);
+  if (loaded !== null) addTerminals(table, "loaded", loaded, falls, Object.values(powers).flat());
+  table.addSum("coil", powers.coil, falls.resistance);
+  table.addSum("heated", powers.heated, falls.power);
+  table.addSum("other", powers.other, falls.power);
   partFigures.forEach((p, i) => {
     const touching = scene.bodies.filter((_, b) => p.touches.includes(built.regionOfBody(b)));
     addPart(table, p, i, falls.power, surfaceFall(p.body, touching, scene.frequency));
@@ -115,25 +119,35 @@ class Table {
     this.falls.set(name, fall);
     this.parts.set(name, parts);
   }
+
+  addSum(name: string, parts: readonly number[], fall: Fall): void {
+    const total = parts.reduce((a, b) => a + b, 0);
+    this.add(name, total, fall, parts);
+  }
 }
 
-/** R as the sum of the regions' powers, X as that of their energies and the energy outside. */
-function addTerminals(table: Table, state: State, { solution, losses }: Solved, falls: Falls): void {
+/** R as the sum of the powers given, X as that of the regions' energies and the energy outside. */
+function addTerminals(
+  table: Table,
+  state: State,
+  { solution, losses }: Solved,
+  falls: Falls,
+  powers: readonly number[],
+): void {
   const { re, im } = solution.impedance;
-  table.add(`${state}.R`, re, falls.resistance, [...losses.regionPower]);
+  table.add(`${state}.R`, re, falls.resistance, powers);
   const reactive = [...losses.regionEnergy, losses.exteriorEnergy].map((w) => 2 * solution.omega * w);
   table.add(`${state}.X`, im, falls.energy, reactive);
 }
 
-/** Powers of coil, heated parts and the rest, each part and guide by its slices. */
-function addPowers(
-  table: Table,
-  scene: Scene,
-  built: Built,
-  working: Solved,
-  figures: readonly PartFigures[],
-  falls: Falls,
-): void {
+interface Powers {
+  readonly coil: readonly number[];
+  readonly heated: readonly number[];
+  readonly other: readonly number[];
+}
+
+/** All losses: of the coil by turns, of parts that are heated and of the rest, each part and guide by its slices. */
+function powersOf(scene: Scene, built: Built, working: Solved, figures: readonly PartFigures[]): Powers {
   const { losses } = working;
   const slices = (heated: boolean): number[] =>
     figures.filter((p) => p.body.heated === heated).flatMap((p) => p.slices.map((s) => s * p.power));
@@ -143,15 +157,7 @@ function addPowers(
     const power = losses.regionPower[region] ?? 0;
     return slicesOf(working, b, region, power).map((s) => s * power);
   });
-  const sums: [string, number[]][] = [
-    ["coil", [...losses.turnPower]],
-    ["heated", slices(true)],
-    ["other", [...slices(false), ...guides]],
-  ];
-  for (const [name, powers] of sums) {
-    const total = powers.reduce((a, b) => a + b, 0);
-    table.add(name, total, name === "coil" ? falls.resistance : falls.power, powers);
-  }
+  return { coil: [...losses.turnPower], heated: slices(true), other: [...slices(false), ...guides] };
 }
 
 function figuresOf({ solution, losses }: Solved, body: Body, region: number): PartFigures {
