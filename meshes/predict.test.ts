@@ -5,7 +5,7 @@ import { checkDesign } from "./check.ts";
 import { scaleScene } from "./fixtures.ts";
 import { leadPair } from "./leadpair.ts";
 import { leastSpacing } from "./leads.ts";
-import { Cancelled, predict } from "./predict.ts";
+import { Cancelled, type Progress, predict } from "./predict.ts";
 import type { Scene } from "./scene.ts";
 
 /** A short coil round a magnetic plug that sits off its middle, quick to solve. */
@@ -124,6 +124,43 @@ describe("predict", () => {
     }, 0);
     expect(nr * nz).toBe(r.length);
     near(watts, result.power.totalW.value, 1e-9);
+  });
+
+  it("tells the digits of each grid while the next is solved, the last one's with what they are good to", () => {
+    const told: Progress[] = [];
+    predict(checkDesign({ ...draft, coil: { ...draft.coil, leads: { lengthMm: 200, spacingMm: 12 } } }), {
+      progress: (p) => told.push(p),
+    });
+    expect(
+      told.filter((p) => p.stage.startsWith("first grid")).every((p) => p.firstDigits === undefined),
+    ).toBe(true);
+    const early = told.find((p) => p.stage.startsWith("second grid"))?.firstDigits;
+    expect(early?.withinPercent).toBeNull();
+    const { firstDigits: last } = told.at(-1) ?? {};
+    expect(last?.withinPercent).toBeLessThan(0.2);
+    if (early === undefined || last === undefined) throw new Error("no digits");
+    near(early.emptyOhm, last.emptyOhm, 0.02);
+    near(early.loadedH ?? 0, last.loadedH ?? 1, 0.01);
+    near(early.loadedOhm ?? 0, last.loadedOhm ?? 1, 0.02);
+  });
+
+  it("tells at last the digits of the result, leads included, and null without a part", () => {
+    let last: Progress | undefined;
+    const hooks = {
+      progress: (p: Progress) => {
+        last = p;
+      },
+    };
+    const check = (design: object): void => {
+      const { empty, loaded } = predict(checkDesign(design), hooks).result;
+      const digits = last?.firstDigits;
+      near(digits?.emptyOhm ?? 0, empty.resistanceOhm.value, 1e-12);
+      near(digits?.emptyH ?? 0, empty.inductanceH.value, 1e-12);
+      if (loaded === null) expect([digits?.loadedOhm, digits?.loadedH]).toEqual([null, null]);
+      else near(digits?.loadedOhm ?? 0, loaded.resistanceOhm.value, 1e-12);
+    };
+    check({ ...draft, coil: { ...draft.coil, leads: { lengthMm: 200, spacingMm: 12 } } });
+    check({ ...draft, parts: [] });
   });
 
   it("stops when asked to", () => {

@@ -6,6 +6,7 @@ import { cautions } from "./cautions.ts";
 import type { Checked } from "./check.ts";
 import { currentOf, type PerAmpere, powerAt, terminal } from "./drive.ts";
 import type { Fields } from "./fields.ts";
+import { type FirstDigits, firstDigits } from "./first-digits.ts";
 import { heatMap } from "./heat.ts";
 import type { HeatMap } from "./heatmap.ts";
 import { helixSurplus } from "./helix.ts";
@@ -28,6 +29,8 @@ export interface Progress {
   /** 0 … 1 of the whole, as far as can be told. */
   readonly fraction: number;
   readonly stage: string;
+  /** From the first grid on. */
+  readonly firstDigits?: FirstDigits;
 }
 
 export interface Hooks {
@@ -62,14 +65,17 @@ export function predict({ design, scene }: Checked, hooks: Hooks = {}): Predicti
     if (hooks.signal?.aborted === true) throw new Cancelled();
   };
   check();
+  let told: { readonly firstDigits?: FirstDigits } = {};
   const report = (fraction: number, stage: string): void => {
     check();
-    hooks.progress?.({ fraction, stage });
+    hooks.progress?.({ fraction, stage, ...told });
   };
   report(0, "laying the grid");
   const built = build(scene);
   const pair = leadPair(scene);
-  const { finest, bars, grids, met, worst } = solveGrids(scene, built, pair, report);
+  const { finest, bars, grids, met, worst } = solveGrids(scene, built, pair, report, (digits) => {
+    told = { firstDigits: digits };
+  });
   const figures = collect(scene, finest, bars, pair);
   const power = powerAt(scene.drive, figures.perAmpere, 2 * Math.PI * scene.frequency);
   const current = power.currentA.value;
@@ -151,6 +157,7 @@ function solveGrids(
   built: Built,
   pair: LeadPair,
   report: (fraction: number, stage: string) => void,
+  tell: (digits: FirstDigits) => void,
 ): Solved {
   const unknownsAt = (level: number): number => countNodes(built.mesh, level);
   let grids = 0;
@@ -158,12 +165,18 @@ function solveGrids(
   const solveAt = (level: number): Answer => {
     const name = `${ORDINALS[grids] ?? "next"} grid, ${unknownsAt(level)} unknowns${reached(worst, scene)}`;
     const [from, to] = [STARTS[grids] ?? ALL_SOLVED, STARTS[grids + 1] ?? ALL_SOLVED];
-    return answerAt(scene, built, level, (f) => report(from + (to - from) * f, name));
+    const answer = answerAt(scene, built, level, (f) => report(from + (to - from) * f, name));
+    if (grids === 0) tell(firstDigits(scene, answer, pair, null));
+    return answer;
   };
   const refined = refine(
     solveAt,
     unknownsAt,
-    (answer, bars) => excess(scene, answer, bars, pair),
+    (answer, bars) => {
+      const over = excess(scene, answer, bars, pair);
+      tell(firstDigits(scene, answer, pair, 100 * over * scene.accuracy));
+      return over;
+    },
     MOST_UNKNOWNS,
     (count, over) => {
       grids = count;
