@@ -193,17 +193,25 @@ function touchesPlane(shape: Shape): boolean {
   return shape.points.some(([, z]) => z === 0);
 }
 
+/** Steps of skin depth a grid is made for, a factor of two: so that a small change of frequency or material keeps the grid. */
+const STEPS = 4;
+
+/** The step at or below a skin depth. What is a step to rounding counts as one. */
+function stepBelow(depth: number): number {
+  return Number.isFinite(depth) ? 2 ** (Math.floor(STEPS * Math.log2(depth) + 1e-9) / STEPS) : depth;
+}
+
 function sceneTraits(scene: Scene, size: number): RegionTraits[] {
   const air: RegionTraits = { skinDepth: Infinity, wall: 0, active: false, magnetic: false };
-  const copperSkin = skinDepth(scene.conductor, scene.frequency) / size;
+  const depthOf = (material: SceneMaterial): number => stepBelow(skinDepth(material, scene.frequency) / size);
   const turn: RegionTraits = {
-    skinDepth: copperSkin,
+    skinDepth: depthOf(scene.conductor),
     wall: scene.section.wall / size,
     active: true,
     magnetic: false,
   };
   const body = (b: Body): RegionTraits => ({
-    skinDepth: skinDepth(b.material, scene.frequency) / size,
+    skinDepth: depthOf(b.material),
     wall: 0,
     active: b.material.resistivity !== null || b.material.relativePermeability !== 1,
     magnetic: b.material.relativePermeability > 1,
