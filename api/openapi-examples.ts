@@ -29,6 +29,13 @@ export const jobExample: Job = {
   state: "running",
   progress: 0.2,
   stage: "second grid, 16941 unknowns",
+  firstDigits: {
+    emptyOhm: 1.679e-3,
+    emptyH: 7.285e-7,
+    loadedOhm: 1.3213e-2,
+    loadedH: 8.493e-7,
+    withinPercent: null,
+  },
   createdAt: "2026-03-02T08:15:00.000Z",
   startedAt: "2026-03-02T08:15:00.010Z",
   endedAt: null,

@@ -8,6 +8,17 @@ export const JobStateSchema = z.enum(["queued", "running", "done", "failed", "ca
 /** Body of `POST /v1/jobs`; the document is checked by the kind's own schema. */
 export const JobRequestSchema = z.strictObject({ kind: JobKindSchema, document: z.unknown() });
 
+/** R and L of the grids solved so far, before there is a result; leads included. */
+const FirstDigitsSchema = z.object({
+  emptyOhm: z.number(),
+  emptyH: z.number(),
+  /** null without a part. */
+  loadedOhm: z.number().nullable(),
+  loadedH: z.number().nullable(),
+  /** Largest bar of these and of the parts' powers; null after the first grid, which is good to about 1 % and tells no bar. */
+  withinPercent: z.number().nullable(),
+});
+
 /** A job as it stands; times are ISO 8601 in UTC. */
 export const JobSchema = z.object({
   id: z.string(),
@@ -19,6 +30,8 @@ export const JobSchema = z.object({
   progress: z.number().min(0).max(1),
   /** What is being done, in words; "" before it starts. */
   stage: z.string(),
+  /** While running, once a grid is solved; else null. */
+  firstDigits: FirstDigitsSchema.nullable(),
   createdAt: z.iso.datetime(),
   startedAt: z.iso.datetime().nullable(),
   endedAt: z.iso.datetime().nullable(),

@@ -2,6 +2,7 @@
  * What solves jobs: one interface for the local pool of threads, and for whatever may take its place. Everything that crosses it
  * is plain data, so that the other side may be another thread or another machine.
  */
+import type { FirstDigits } from "../../meshes/first-digits.ts";
 import type { JobKind } from "../contract/job.ts";
 import type { Problem } from "../contract/problem.ts";
 
@@ -16,6 +17,7 @@ export interface TaskProgress {
   /** 0 … 1 of the whole. */
   readonly fraction: number;
   readonly stage: string;
+  readonly firstDigits?: FirstDigits;
 }
 
 /** What a solve leaves behind, in the form it is stored in. */

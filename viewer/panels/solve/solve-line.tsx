@@ -3,6 +3,7 @@ import { ended, type Job } from "../../../api/contract/job.ts";
 import type { Problem } from "../../../api/contract/problem.ts";
 import { answer, asItWas, asking, asSolved, cancel, job, problem, reachable, solve } from "../../jobs.ts";
 import { faults } from "../../state.ts";
+import { FirstDigits } from "./first-digits.tsx";
 import { KeyFigures } from "./key-figures.tsx";
 import "./solve-line.css";
 
@@ -48,6 +49,7 @@ function Working({ job: working }: { job: Job | null }) {
       <output class="solve-stage" aria-live="polite">
         {stage}
       </output>
+      {working?.firstDigits != null && <FirstDigits digits={working.firstDigits} />}
     </>
   );
 }
