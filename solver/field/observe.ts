@@ -217,15 +217,22 @@ function volumeAbove(pieces: Pieces, i: number, density: number): number {
 
 /** The density that the volume `tail` exceeds, by halving. */
 function upperQuantile(pieces: Pieces, tail: number): number {
-  const count = pieces.volume.length;
+  const { most } = pieces;
   let low = 0;
-  let high = pieces.most.reduce((a, b) => Math.max(a, b), 0);
+  let high = most.reduce((a, b) => Math.max(a, b), 0);
+  // Pieces below `low` have no part in any later sum; soon only the few hottest are left.
+  const list = Int32Array.from(most.keys());
+  let count = list.length;
   for (let k = 0; k < HALVINGS; k++) {
     const middle = (low + high) / 2;
     let above = 0;
-    for (let i = 0; i < count; i++) above += volumeAbove(pieces, i, middle);
-    if (above > tail) low = middle;
-    else high = middle;
+    for (let i = 0; i < count; i++) above += volumeAbove(pieces, list[i], middle);
+    if (above > tail) {
+      low = middle;
+      let kept = 0;
+      for (let i = 0; i < count; i++) if (most[list[i]] > low) list[kept++] = list[i];
+      count = kept;
+    } else high = middle;
   }
   return (low + high) / 2;
 }
