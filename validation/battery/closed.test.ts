@@ -5,7 +5,7 @@ import { MU0 } from "../../solver/index.ts";
 import { skinDepth } from "../analytic/skin.ts";
 import { solidSphere } from "../analytic/sphere.ts";
 import { closedForms } from "./closed.ts";
-import { bar, rings, sphere } from "./designs/pieces.ts";
+import { bar, rings, sphere, stack, watts } from "./designs/pieces.ts";
 
 /** A ball of 24 mm in two rings of 3 m radius and spacing: its field is uniform to the fourth power of 0.004. */
 it.each([
@@ -53,4 +53,27 @@ it("R of a ring at 1 Hz is ρ 2π/∫dS/r, by midpoint sums, and the first trace
   const ohm = (2 * Math.PI * 1.75e-8 * skin) / sum;
   const got = closedForms("one-ring-mains", scene).get("empty.resistanceOhm");
   expect(Math.abs((got?.value ?? 0) / ohm - 1)).toBeLessThan(1e-9);
+});
+
+/** Archimedes: a sphere has the surface of its cylinder's side. */
+it("spheres of given power share it over their cylinders' sides", () => {
+  const { scene } = checkDesign({
+    coil: { conductor: bar(2), winding: rings([[40, 0]]) },
+    parts: [stack(3, 1, { shape: "sphere", diameterMm: 13 }, [2e-7, 1])],
+    drive: watts(60_000, 300),
+  });
+  const sides = 3 * Math.PI * 0.013 * 0.013;
+  const got = closedForms("balls-tenth-gap", scene).get("parts.0.surfaceWPerM2");
+  expect((got?.value ?? 0) * sides).toBeCloseTo(300, 9);
+});
+
+it("a stack of washers without gaps has no surface between them: two sides and two ends", () => {
+  const { scene } = checkDesign({
+    coil: { conductor: bar(2), winding: rings([[40, 0]]) },
+    parts: [stack(5, 0, { shape: "cylinder", diameterMm: 36, boreDiameterMm: 12, lengthMm: 5 }, [2e-7, 1])],
+    drive: watts(60_000, 300),
+  });
+  const surface = Math.PI * (0.036 + 0.012) * 0.025 + 2 * Math.PI * (0.018 ** 2 - 0.006 ** 2);
+  const got = closedForms("washers-no-gap", scene).get("parts.0.surfaceWPerM2");
+  expect((got?.value ?? 0) * surface).toBeCloseTo(300, 9);
 });

@@ -7,6 +7,7 @@
  *     G_l = Σ ⟨µ0 I sin α/2 (a/d)^l P_l¹(cos α)⟩/(l(l+1)), d and α the wire's distance and angle from the middle (J. D. Jackson, Classical
  *   Electrodynamics, problem 5.8, from memory; the first order checked against the field of a ring), and inside A_l = (2l+1) G_l/(l + w),
  *     w = (z i_(l−1)(z)/i_l(z) − l)/µr, z = (1+j) a/δ;  P = Σ 4π a l(l+1)/(2l+1) ω|A_l|² Im w/µ0.
+ * - Parts of given power: over their surface, which washers stacked without a gap have as one ring.
  */
 import type { Scene } from "../../meshes/scene.ts";
 import type { Uncertain } from "../../meshes/uncertain.ts";
@@ -27,6 +28,9 @@ const FORMS: Readonly<Record<string, (scene: Scene) => Closed>> = {
   "two-wires-mains": thinRings,
   "ball-in-rings-wide-skin": sphereInRings,
   "ball-in-rings-thin-skin": sphereInRings,
+  "ball-by-power": powerOverSurface,
+  "balls-tenth-gap": powerOverSurface,
+  "washers-no-gap": powerOverSurface,
 };
 
 /** Closed forms a design of this id has; none for most. */
@@ -49,6 +53,20 @@ function thinRings(scene: Scene): Closed {
   const skin = wireImpedanceRatio(b / skinDepth(rho, scene.frequency, 1)).re;
   const ohm = scene.turns.reduce((sum, t) => sum + (skin * rho) / (t.r - Math.sqrt(t.r ** 2 - b ** 2)), 0);
   return new Map([["empty.resistanceOhm", within(ohm, RING_DOUBT)]]);
+}
+
+/** The power the drive fixes over the surface: 4πa² of each sphere, 2π ∮ r dl of an outline off the axis (chord times twice π times its middle radius). */
+function powerOverSurface({ drive, bodies }: Scene): Closed {
+  if (drive.kind !== "power") throw new RangeError("the power is not given");
+  const area = bodies[0]!.pieces.reduce((sum, piece) => {
+    if (piece.kind === "sphere") return sum + 4 * Math.PI * piece.radius ** 2;
+    const { points } = piece;
+    return points.reduce((side, p, i) => {
+      const q = points[(i + 1) % points.length]!;
+      return side + Math.PI * (p[0] + q[0]) * Math.hypot(q[0] - p[0], q[1] - p[1]);
+    }, sum);
+  }, 0);
+  return new Map([["parts.0.surfaceWPerM2", within(drive.watt / area, 0)]]);
 }
 
 /** Mean of f(r, z) over a wire of radius b at (a, z0), weighted 1/r: Gauss points in the radius squared, equal steps in the angle. */
