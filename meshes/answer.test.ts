@@ -83,6 +83,13 @@ describe("one grid's answer", () => {
     }
   });
 
+  it("a heated part's energy, which errs as its power does, guards the bar of both", () => {
+    const [region] = answer.figures.map((p) => p.region);
+    const energy = answer.loaded?.losses.regionEnergy[region ?? 0];
+    for (const name of ["part0.power", "heated"]) expect(answer.kin?.get(name)?.[0]?.value).toBe(energy);
+    expect(energy).toBeGreaterThan(0);
+  });
+
   it("coil, heated and other losses are all of R", () => {
     const total = ["coil", "heated", "other"].reduce((t, name) => t + (answer.values.get(name) ?? 0), 0);
     expect(total / (answer.values.get("loaded.R") ?? 0)).toBeCloseTo(1, 9);

@@ -6,6 +6,7 @@ import {
   type CoilSolution,
   fieldOfRings,
   type GridAnswer,
+  type Kin,
   type Losses,
   lossesOf,
   makeProbe,
@@ -18,7 +19,7 @@ import {
   type Tick,
 } from "../solver/index.ts";
 import type { Built, State } from "./build.ts";
-import { type Fall, type Falls, fallsOf, NEAR, PEAK, surfaceFall } from "./falls.ts";
+import { type Fall, type Falls, fallsOf, kinship, NEAR, PEAK, surfaceFall } from "./falls.ts";
 import { readyAt } from "./ready.ts";
 import type { Body, Scene } from "./scene.ts";
 import { extentOf, sphereSurface } from "./surfaces.ts";
@@ -89,6 +90,7 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     const touching = scene.bodies.filter((_, b) => p.touches.includes(built.regionOfBody(b)));
     addPart(table, p, i, falls.power, surfaceFall(p.body, touching, scene.frequency));
   });
+  addKin(table, working, partFigures, kinship(scene.bodies));
   addStray(table, scene, working, falls.field);
   const balances = [empty, ...(loaded === null ? [] : [loaded])].map(
     (s) => powerBalance(s.solution, s.losses).active,
@@ -98,6 +100,7 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
     unknowns: prepared.system.unknowns,
     values: table.values,
     parts: table.parts,
+    kin: table.kin,
     falls: table.falls,
     rounding: table.rounding,
     empty,
@@ -111,6 +114,7 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
 class Table {
   readonly values = new Map<string, number>();
   readonly parts = new Map<string, readonly number[]>();
+  readonly kin = new Map<string, readonly Kin[]>();
   readonly falls = new Map<string, Fall>();
   readonly rounding = new Map<string, number>();
 
@@ -201,6 +205,18 @@ function addPart(table: Table, p: PartFigures, i: number, power: Fall, surface: 
     PEAK,
     near.map((d) => d / near.length),
   );
+}
+
+/** Energies of the parts as kin of their powers. */
+function addKin(table: Table, { losses }: Solved, figures: readonly PartFigures[], weight: number): void {
+  const kinOf = (p: PartFigures): Kin => ({
+    value: losses.regionEnergy[p.region] ?? 0,
+    weight: weight * p.power,
+  });
+  figures.forEach((p, i) => {
+    table.kin.set(`part${i}.power`, [kinOf(p)]);
+  });
+  table.kin.set("heated", figures.filter((p) => p.body.heated).map(kinOf));
 }
 
 /** By summing over all ring sources; at points too near to one, from the cell that holds the point, which converges slower. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { fallsOf, surfaceFall } from "./falls.ts";
+import { fallsOf, kinship, surfaceFall } from "./falls.ts";
 import type { Body, Piece } from "./scene.ts";
 
 /** A rod 40 mm thick and 400 mm long. */
@@ -36,6 +36,11 @@ describe("falls of global figures", () => {
       expect(edged[figure].order).toBeLessThan(smooth[figure].order);
     }
   });
+});
+
+it("a body's energy is kin of its power where magnetic edges are", () => {
+  expect(kinship([body(rod, 60), body(ball, 1)])).toBeGreaterThan(0);
+  expect(kinship([body(rod, 1), body(ball, 60)])).toBe(0);
 });
 
 describe("fall of the surface field", () => {

@@ -46,6 +46,16 @@ const EDGED: Falls = {
   field: { order: MAGNETIC, share: 1 },
 };
 
+/**
+ * Power and magnetic energy of a body both go as its field squared. Where magnetic edges are, the fast part of a power's error may hide the slow
+ * one by cancelling it in every slice alike; the energy's movement shows it. This much of it (relative) is at least what the power moved: our
+ * own figure, from the battery (a core of wide skin erred by 0.6 of it).
+ */
+const KINSHIP = 2 / 3;
+
+/** Weight of a body's energy as kin of its power; 0 where no magnetic body has edges. */
+export const kinship = (bodies: readonly Body[]): number => (bodies.some(hasEdges) ? KINSHIP : 0);
+
 /** Falls of the figures of a coil with these bodies present (none: of a pair of leads, or a coil by itself). */
 export const fallsOf = (bodies: readonly Body[]): Falls => (bodies.some(hasEdges) ? EDGED : SMOOTH);
 

@@ -32,7 +32,7 @@ export {
 } from "./linear/direct.ts";
 export { type MaterialState, materialAt, materialIds, materials } from "./materials/catalogue.ts";
 export type { Cited, LinearResistivity, MaterialRecord, ResistivityLaw } from "./materials/laws.ts";
-export { type Fall, type GridAnswer, type Refined, refine, remaining } from "./refine.ts";
+export { type Fall, type GridAnswer, type Kin, type Refined, refine, remaining } from "./refine.ts";
 export type {
   Circuit,
   Complex,

@@ -90,6 +90,17 @@ describe("bars from two grids", () => {
     expect(barsBetween(coarse, fine).get("q")).toBeGreaterThan(error(fine, 10));
   });
 
+  it("follow a value's kin where the value itself hides its error", () => {
+    // Both parts of the error cancel in value and parts alike; an energy of the same field moves by a tenth of itself.
+    const [coarse, fine] = [1, 2].map((n) => answer(n, 10, 0, 0, SLOW)) as [GridAnswer, GridAnswer];
+    const kin = (value: number): Pick<GridAnswer, "kin"> => ({
+      kin: new Map([["q", [{ value, weight: 5 }]]]),
+    });
+    const bar = barsBetween({ ...coarse, ...kin(2.2) }, { ...fine, ...kin(2) }).get("q");
+    expect(bar).toBeCloseTo((5 * 0.1) / 3, 12);
+    expect(barsBetween({ ...coarse, ...kin(0) }, { ...fine, ...kin(0) }).get("q")).toBe(0);
+  });
+
   it("are never below what the value's rounding takes", () => {
     const [coarse, fine] = [1, 2].map((n) => answer(n, 0, 0, 0, SLOW)) as [GridAnswer, GridAnswer];
     expect(barsBetween(coarse, { ...fine, rounding: new Map([["q", 1e-9]]) }).get("q")).toBe(1e-9);

@@ -9,8 +9,8 @@
  *   bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) · e(n)/(e(m) − e(n)),  levels m < n the last two, c_i the parts q is the sum of.
  *
  * With φ = 1 that is Richardson's bound for errors that fall at least as n^−p. With a smaller φ the first bar is narrower, and later ones narrow
- * less than n⁻⁴, as the slow part is what remains. Where two parts of the error cancel in q_n − q_m by chance they do not in every c_i. The
- * grid reaches to infinity, so there is no outer boundary to allow for; the direct solution's own error is far below (its residual is reported).
+ * less than n⁻⁴, as the slow part is what remains. Where two parts of the error cancel in q_n − q_m by chance they do not in every c_i, nor in
+ * q's kin: numbers that have the same cause for their error, whose relative movement counts as well. The grid reaches to infinity, so there is no outer boundary to allow for; the direct solution's own error is far below (its residual is reported).
  */
 
 import { SolverError } from "./errors.ts";
@@ -25,6 +25,13 @@ export interface Fall {
 /** Order of the fast part. */
 const FAST = 4;
 
+/** A number that errs for the same reason as another. */
+export interface Kin {
+  readonly value: number;
+  /** What its relative movement is worth, in the other's unit. */
+  readonly weight: number;
+}
+
 /** What one grid says. */
 export interface GridAnswer {
   /** Cells along a patch's edge. */
@@ -34,6 +41,8 @@ export interface GridAnswer {
   readonly values: ReadonlyMap<string, number>;
   /** Parts whose sum a value is, where it has any; as many on every grid. */
   readonly parts: ReadonlyMap<string, readonly number[]>;
+  /** Kin of a value, where it has any; as many on every grid. */
+  readonly kin?: ReadonlyMap<string, readonly Kin[]>;
   /** How each value's error falls at the slowest. */
   readonly falls: ReadonlyMap<string, Fall>;
   /** Half-widths that a value's rounding alone takes, for those that have any to speak of. */
@@ -53,9 +62,10 @@ export function barsBetween(coarse: GridAnswer, fine: GridAnswer): Map<string, n
   const bars = new Map<string, number>();
   for (const [name, value] of fine.values) {
     const before = coarse.values.get(name) ?? Number.NaN;
-    const moved = partsMoved(coarse.parts.get(name), fine.parts.get(name));
+    const parts = partsMoved(coarse.parts.get(name), fine.parts.get(name));
+    const kin = kinMoved(coarse.kin?.get(name), fine.kin?.get(name));
     const left = remaining(fine.falls.get(name), coarse.level, fine.level);
-    const bar = Math.max(Math.abs(value - before), moved) * left + (fine.rounding?.get(name) ?? 0);
+    const bar = Math.max(Math.abs(value - before), parts, kin) * left + (fine.rounding?.get(name) ?? 0);
     // A bar that is no number would never shrink, and no level would be the next.
     if (!Number.isFinite(bar)) throw new SolverError("number", `${name} is ${value} after ${before}`);
     bars.set(name, bar);
@@ -75,6 +85,13 @@ export function remaining(fall: Fall | undefined, m: number, n: number): number 
 function partsMoved(before: readonly number[] | undefined, after: readonly number[] | undefined): number {
   if (before === undefined || after === undefined) return 0;
   return after.reduce((sum, c, i) => sum + Math.abs(c - before[i]), 0);
+}
+
+function kinMoved(before: readonly Kin[] = [], after: readonly Kin[] = []): number {
+  return after.reduce((sum, { value, weight }, i) => {
+    const was = before[i]?.value ?? value;
+    return value === 0 ? sum : sum + weight * Math.abs(1 - was / value);
+  }, 0);
 }
 
 /** Level to solve next when `bars` must shrink by `factor`: bars usually fall as n⁻³ or better. */
