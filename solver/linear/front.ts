@@ -25,10 +25,9 @@ export function layoutOf(n: number): FrontLayout {
   return { leading, imag, size: 2 * imag };
 }
 
-/** The kernel with its memory: room for two fronts, a child and its parent. Indices into `numbers`. */
-export interface Workspace {
-  /** See `kernelModule`; addresses in bytes. */
-  readonly run: (
+/** The kernel's functions; see kernel.ts and transfers.ts. Addresses in bytes. */
+interface Kernel {
+  eliminate(
     c: number,
     plane: number,
     column: number,
@@ -37,47 +36,100 @@ export interface Workspace {
     inverse: number,
     n: number,
     p: number,
-  ) => number;
+  ): number;
+  pack(
+    c: number,
+    plane: number,
+    column: number,
+    first: number,
+    last: number,
+    n: number,
+    skip: number,
+    re: number,
+    im: number,
+  ): void;
+  extend(
+    source: number,
+    sourcePlane: number,
+    stride: number,
+    change: number,
+    index: number,
+    indexEnd: number,
+    c: number,
+    plane: number,
+    column: number,
+  ): void;
+  readonly forward: Sweep;
+  readonly backward: Sweep;
+}
+
+type Sweep = (
+  l: number,
+  plane: number,
+  x: number,
+  xPlane: number,
+  rows: number,
+  n: number,
+  p: number,
+  y: number,
+  yPlane: number,
+) => void;
+
+/** The kernel with its memory: room for two fronts, a child and its parent, and more. Indices into `numbers`. */
+export interface Workspace {
+  readonly kernel: Kernel;
   readonly numbers: Float64Array;
+  /** The same memory as 32-bit integers. */
+  readonly integers: Int32Array;
   /** The most rows of a front. */
   readonly rows: number;
   readonly areas: readonly [number, number];
-  /** The kernel's packed L and W, and 1/D (pairs re, im). */
+  /** The kernel's packed L and W; outside of an elimination room for twice 48 numbers a row each. */
   readonly packL: number;
   readonly packW: number;
+  /** 1/D (pairs re, im). */
   readonly inverse: number;
+  /** Room for `spare` numbers more. */
+  readonly rest: number;
+  readonly spare: number;
 }
 
 declare const WebAssembly: {
   Memory: new (size: { initial: number }) => { readonly buffer: ArrayBuffer };
   Module: new (code: Uint8Array) => object;
-  Instance: new (
-    module: object,
-    host: { host: { memory: object } },
-  ) => { readonly exports: { readonly run: Workspace["run"] } };
+  Instance: new (module: object, host: { host: { memory: object } }) => { readonly exports: Kernel };
 };
 
 const PAGE = 65536;
-/** Kept for the life of the process: the compiled kernel, and a memory as large as the largest front met. */
+/** Kept for the life of the process: the compiled kernel, and a memory as large as the largest front and rest met. */
 let compiled: object | undefined;
 let space: Workspace | undefined;
 
 /**
- * The kernel, with room for fronts up to n rows; contents are whatever the last user left. A memory too small is replaced, not grown:
- * growing detaches its buffer, and at the first detached buffer V8 throws away all code compiled for typed arrays.
+ * The kernel, with room for fronts up to n rows and `spare` numbers; contents are whatever the last user left. A memory too small is
+ * replaced, not grown: growing detaches its buffer, and at the first detached buffer V8 throws away all code compiled for typed arrays.
  */
-export function frontWorkspace(n: number): Workspace {
-  if (space !== undefined && space.rows >= n) return space;
-  const rows = Math.ceil(Math.max(n, 1.2 * (space?.rows ?? 0)));
+export function frontWorkspace(n: number, spare = 0): Workspace {
+  if (space !== undefined && space.rows >= n && space.spare >= spare) return space;
+  const rows = grown(n, space?.rows ?? 0);
+  const room = grown(spare, space?.spare ?? 0);
   const { leading, size } = layoutOf(rows);
   const packL = (2 * size + 7) & ~7;
   const packW = packL + 2 * leading * BLOCK;
   const inverse = packW + 2 * leading * BLOCK;
+  const rest = inverse + 2 * rows + 2;
   compiled ??= new WebAssembly.Module(kernelModule());
-  const memory = new WebAssembly.Memory({ initial: Math.ceil((8 * (inverse + 2 * rows + 2)) / PAGE) });
-  const { run } = new WebAssembly.Instance(compiled, { host: { memory } }).exports;
-  space = { run, numbers: new Float64Array(memory.buffer), rows, areas: [0, size], packL, packW, inverse };
+  const memory = new WebAssembly.Memory({ initial: Math.ceil((8 * (rest + room)) / PAGE) });
+  const { exports: kernel } = new WebAssembly.Instance(compiled, { host: { memory } });
+  const numbers = new Float64Array(memory.buffer);
+  const integers = new Int32Array(memory.buffer);
+  space = { kernel, numbers, integers, rows, areas: [0, size], packL, packW, inverse, rest, spare: room };
   return space;
+}
+
+/** A little more than asked for where the memory has to be replaced again, the old size where that will do. */
+function grown(asked: number, old: number): number {
+  return asked <= old ? old : Math.ceil(Math.max(asked, 1.2 * old));
 }
 
 /** C = 0, where it will be read: whole columns of small fronts, of large ones what lies below the diagonal tile's top. */
@@ -97,8 +149,8 @@ export function clearFront(c: Float64Array, area: number, n: number): void {
 const LARGE = 200;
 
 /**
- * Eliminates the first p of n rows of the front at `area`. Entries of L go to `out` from index `entry`, 1/D from index `pivot`.
- * Returns −1, or the pivot (counted within the front; the first of its pair) that is zero or not finite.
+ * Eliminates the first p of n rows of the front at `area`; the other area is used up. Entries of L go to `out` from index `entry`, 1/D from
+ * index `pivot`. Returns −1, or the pivot (counted within the front; the first of its pair) that is zero or not finite.
  */
 export function eliminate(
   space: Workspace,
@@ -109,22 +161,20 @@ export function eliminate(
   entry: number,
   pivot: number,
 ): number {
+  if (p === 0) return -1;
   const { leading, imag } = layoutOf(n);
-  const { numbers: c, inverse } = space;
-  const bad = space.run(8 * area, 8 * imag, 8 * leading, 8 * space.packL, 8 * space.packW, 8 * inverse, n, p);
+  const { kernel, numbers: c, inverse, packL, packW } = space;
+  const [front, plane, column] = [8 * area, 8 * imag, 8 * leading];
+  const bad = kernel.eliminate(front, plane, column, 8 * packL, 8 * packW, 8 * inverse, n, p);
   if (bad >= 0) return bad;
-  const { re, im } = out;
-  let e = entry;
   for (let k = 0; k < p; k++) {
     out.inverseRe[pivot + k] = c[inverse + 2 * k];
     out.inverseIm[pivot + k] = c[inverse + 2 * k + 1];
-    const column = area + k * leading;
-    const end = column + n;
-    for (let i = column + k + 1; i < end; i++) {
-      re[e] = c[i];
-      im[e] = c[imag + i];
-      e++;
-    }
   }
+  const count = (p * (2 * n - 1 - p)) / 2;
+  const other = area === space.areas[0] ? space.areas[1] : space.areas[0];
+  kernel.pack(front, plane, column, 0, p, n, 1, 8 * other, 8 * (other + count));
+  out.re.set(c.subarray(other, other + count), entry);
+  out.im.set(c.subarray(other + count, other + 2 * count), entry);
   return -1;
 }

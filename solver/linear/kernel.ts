@@ -13,6 +13,7 @@
  * No pivoting: stable where real and imaginary parts are semidefinite and together definite
  * (Higham, Math. Comp. 67 (1998) 1591, from memory).
  */
+import { backward, extend, forward, pack } from "./transfers.ts";
 import {
   add,
   and,
@@ -66,9 +67,16 @@ const ONE = 1;
 const TWO = 2;
 const ELIMINATE = 3;
 
-/** The module: exports `run(c, plane, column, packL, packW, inverse, n, p)` → −1 or the pivot that is zero or not finite. */
+/**
+ * The module: exports `eliminate(c, plane, column, packL, packW, inverse, n, p)` → −1 or the pivot that is zero or not finite, and what
+ * transfers.ts describes.
+ */
 export function kernelModule(): Uint8Array {
-  return moduleOf([update(), columns(1), columns(2), eliminate()], ELIMINATE);
+  const around = { pack: 4, extend: 5, forward: 6, backward: 7 };
+  return moduleOf([update(), columns(1), columns(2), eliminate(), pack(), extend(), forward(), backward()], {
+    eliminate: ELIMINATE,
+    ...around,
+  });
 }
 
 /**

@@ -3,14 +3,21 @@
  * stack; a right child's is fetched where it lies, for its parent comes next.
  */
 import { SolverError } from "../errors.ts";
-import { clearFront, eliminate, type FactorNumbers, frontWorkspace, layoutOf } from "./front.ts";
+import {
+  clearFront,
+  eliminate,
+  type FactorNumbers,
+  frontWorkspace,
+  layoutOf,
+  type Workspace,
+} from "./front.ts";
 import type { ElementStructure, ElementValues } from "./structure.ts";
 import { type Fronts, isRightChild, triangle } from "./symbolic.ts";
 
-/** Lower triangles by columns, waiting for their parent front. */
+/** Lower triangles by columns, waiting for their parent front: indices into the workspace's numbers. */
 interface Stack {
-  readonly re: Float64Array;
-  readonly im: Float64Array;
+  readonly re: number;
+  readonly im: number;
   top: number;
 }
 
@@ -34,8 +41,8 @@ export function factoriseFronts(
     inverseRe: new Float64Array(structure.unknowns),
     inverseIm: new Float64Array(structure.unknowns),
   };
-  const stack: Stack = { re: new Float64Array(fronts.stack), im: new Float64Array(fronts.stack), top: 0 };
-  const space = frontWorkspace(fronts.largest);
+  const space = frontWorkspace(fronts.largest, 2 * fronts.stack);
+  const stack: Stack = { re: space.rest, im: space.rest + fronts.stack, top: 0 };
   const c = space.numbers;
   let pivot = 0;
   let told = 0;
@@ -44,13 +51,13 @@ export function factoriseFronts(
     clearFront(c, area, rows[f]);
     if (tree.left[f] < 0) assembleLeaf(structure, valueStart, fronts, values, f, c, area);
     else {
-      addNeighbour(fronts, f, c, space.areas[(f - 1) & 1], area);
-      addWaiting(fronts, stack, f, c, area);
+      addNeighbour(fronts, f, space, space.areas[(f - 1) & 1], area);
+      addWaiting(fronts, stack, f, space, area);
     }
     const bad = eliminate(space, area, rows[f], pivots[f], out, entryStart[f], pivot);
     if (bad >= 0) throw singular(fronts, pivot + bad);
     pivot += pivots[f];
-    if (!isRightChild(tree, f)) keepRemainder(fronts, stack, f, c, area);
+    if (!isRightChild(tree, f)) keepRemainder(fronts, stack, f, space, area);
     if (onProgress !== undefined && (f + 1 === count || work[f + 1] - told >= work[count] / REPORTS)) {
       told = work[f + 1];
       onProgress(told / work[count]);
@@ -94,59 +101,48 @@ function assembleLeaf(
 }
 
 /** C += the remainder of f's right child, still where it was eliminated: it comes right before f. */
-function addNeighbour(fronts: Fronts, f: number, c: Float64Array, from: number, area: number): void {
-  const { rowInParent, rowStart } = fronts;
+function addNeighbour(fronts: Fronts, f: number, space: Workspace, from: number, area: number): void {
   const g = f - 1;
-  const source = layoutOf(fronts.rows[g]);
-  const { leading, imag } = layoutOf(fronts.rows[f]);
-  const p = fronts.pivots[g];
-  const n = fronts.rows[g];
-  const first = rowStart[g];
-  for (let j = p; j < n; j++) {
-    const column = area + rowInParent[first + j] * leading;
-    const s = from + j * source.leading;
-    for (let i = j; i < n; i++) {
-      const at = column + rowInParent[first + i];
-      c[at] += c[s + i];
-      c[imag + at] += c[s + source.imag + i];
-    }
-  }
+  const { leading, imag } = layoutOf(fronts.rows[g]);
+  const source = from + fronts.pivots[g] * (leading + 1);
+  addRemainder(fronts, g, space, [source, source + imag, leading + 1, 0], f, area);
 }
 
 /** C += the remainder of f's left child, taken from the top of the stack. */
-function addWaiting(fronts: Fronts, stack: Stack, f: number, c: Float64Array, area: number): void {
-  const { rowInParent, rowStart } = fronts;
+function addWaiting(fronts: Fronts, stack: Stack, f: number, space: Workspace, area: number): void {
   const g = fronts.tree.left[f];
+  const rest = fronts.rows[g] - fronts.pivots[g];
+  stack.top -= triangle(rest);
+  addRemainder(fronts, g, space, [stack.re + stack.top, stack.im + stack.top, rest, -1], f, area);
+}
+
+/** C += the remainder of child g: where its real and imaginary parts are, the first column's stride and its change. */
+function addRemainder(
+  fronts: Fronts,
+  g: number,
+  { kernel, integers, packL }: Workspace,
+  [re, im, stride, change]: readonly [number, number, number, number],
+  f: number,
+  area: number,
+): void {
+  const { rowInParent, rowStart } = fronts;
   const { leading, imag } = layoutOf(fronts.rows[f]);
-  const first = rowStart[g] + fronts.pivots[g];
-  const last = rowStart[g + 1];
-  const { re, im } = stack;
-  stack.top -= triangle(last - first);
-  let s = stack.top;
-  for (let j = first; j < last; j++) {
-    const column = area + rowInParent[j] * leading;
-    for (let i = j; i < last; i++) {
-      const at = column + rowInParent[i];
-      c[at] += re[s];
-      c[imag + at] += im[s];
-      s++;
-    }
-  }
+  const places = rowInParent.subarray(rowStart[g] + fronts.pivots[g], rowStart[g + 1]);
+  // The kernel packs nothing now.
+  integers.set(places, 2 * packL);
+  const [index, end] = [8 * packL, 8 * packL + 4 * places.length];
+  kernel.extend(
+    ...([8 * re, 8 * (im - re), 8 * stride, 8 * change] as const),
+    ...([index, end, 8 * area, 8 * imag, 8 * leading] as const),
+  );
 }
 
 /** Puts the rows beyond the pivots on the stack. */
-function keepRemainder(fronts: Fronts, stack: Stack, f: number, c: Float64Array, area: number): void {
+function keepRemainder(fronts: Fronts, stack: Stack, f: number, { kernel }: Workspace, area: number): void {
   const n = fronts.rows[f];
+  const p = fronts.pivots[f];
   const { leading, imag } = layoutOf(n);
-  const { re, im } = stack;
-  let s = stack.top;
-  for (let j = fronts.pivots[f]; j < n; j++) {
-    const column = area + j * leading;
-    for (let i = j; i < n; i++) {
-      re[s] = c[column + i];
-      im[s] = c[imag + column + i];
-      s++;
-    }
-  }
-  stack.top = s;
+  const [re, im] = [8 * (stack.re + stack.top), 8 * (stack.im + stack.top)];
+  kernel.pack(8 * area, 8 * imag, 8 * leading, p, n, n, 0, re, im);
+  stack.top += triangle(n - p);
 }

@@ -35,11 +35,14 @@ export class FunctionBuilder {
   }
 }
 
-/** The module's bytes: functions by index, `exported` the one exported as `run`; the memory is imported as `host.memory`. */
-export function moduleOf(
-  functions: readonly { readonly builder: FunctionBuilder; readonly code: Code }[],
-  exported: number,
-): Uint8Array {
+/** A function of a module. */
+export interface Part {
+  readonly builder: FunctionBuilder;
+  readonly code: Code;
+}
+
+/** The module's bytes: functions by index, `exported` the indices of those to be called from outside by name; the memory is imported as `host.memory`. */
+export function moduleOf(functions: readonly Part[], exported: Readonly<Record<string, number>>): Uint8Array {
   const types = functions.flatMap(({ builder }) => [
     0x60,
     ...leb(builder.parameters),
@@ -47,12 +50,13 @@ export function moduleOf(
     ...(builder.result ? [1, I32] : [0]),
   ]);
   const count = functions.length;
+  const names = Object.entries(exported);
   return Uint8Array.from([
     ...[0x00, 0x61, 0x73, 0x6d, 1, 0, 0, 0],
     ...section(1, [count, ...types]),
     ...section(2, [1, ...name("host"), ...name("memory"), 2, 0, 1]),
     ...section(3, [count, ...functions.keys()]),
-    ...section(7, [1, ...name("run"), 0, exported]),
+    ...section(7, [names.length, ...names.flatMap(([key, index]) => [...name(key), 0, index])]),
     ...section(10, [count, ...functions.flatMap(({ code }) => code)]),
   ]);
 }
@@ -92,6 +96,8 @@ export const shiftRight = (a: Code, bits: number): Code => [...a, ...constant(bi
 export const smaller = (a: Code, b: Code): Code => [...a, ...b, ...less(a, b), 0x1b];
 export const larger = (a: Code, b: Code): Code => [...b, ...a, ...less(a, b), 0x1b];
 
+/** A 32-bit integer at an address plus a byte offset. */
+export const loadInteger = (address: Code, offset: number): Code => [...address, 0x28, 2, ...leb(offset)];
 /** Numbers at an address plus a byte offset. */
 export const loadNumber = (address: Code, offset: number): Code => [...address, 0x2b, 3, ...leb(offset)];
 export const storeNumber = (address: Code, offset: number, value: Code): Code => [
@@ -123,6 +129,8 @@ export const both = (a: Code): Code => [...a, 0xfd, 0x14];
 export const vectorAdd = binary(0xfd, 0xf0, 1);
 export const vectorSubtract = binary(0xfd, 0xf1, 1);
 export const vectorMultiply = binary(0xfd, 0xf2, 1);
+export const firstOf = (a: Code): Code => [...a, 0xfd, 0x21, 0];
+export const secondOf = (a: Code): Code => [...a, 0xfd, 0x21, 1];
 /** [a₀, b₀] and [a₁, b₁]. */
 export const firsts = binary(0xfd, 0x0d, 0, 1, 2, 3, 4, 5, 6, 7, 16, 17, 18, 19, 20, 21, 22, 23);
 export const seconds = binary(0xfd, 0x0d, 8, 9, 10, 11, 12, 13, 14, 15, 24, 25, 26, 27, 28, 29, 30, 31);
