@@ -8,9 +8,10 @@
  *   e(n) ∝ (1 − φ) n⁻⁴/(1 − 2⁻⁴) + φ n^−p/(1 − 2^−p)
  *   bar(q) = max(|q_n − q_m|, Σ_i |c_i,n − c_i,m|) · e(n)/(e(m) − e(n)),  levels m < n the last two, c_i the parts q is the sum of.
  *
- * With φ = 1 that is Richardson's bound for errors that fall at least as n^−p. With a smaller φ the first bar is narrower, and later ones narrow
- * less than n⁻⁴, as the slow part is what remains. Where two parts of the error cancel in q_n − q_m by chance they do not in every c_i, nor in
- * q's kin: numbers that have the same cause for their error, whose relative movement counts as well. The grid reaches to infinity, so there is no outer boundary to allow for; the direct solution's own error is far below (its residual is reported).
+ * With φ = 1 that is Richardson's bound for errors that fall at least as n^−p. With a smaller φ the first bar is narrower, and later ones
+ * narrow less than n⁻⁴, as the slow part is what remains. Where two parts of the error cancel in q_n − q_m by chance they do not in every c_i,
+ * nor in q's kin: numbers that err for the same reason, whose relative movement counts as well. The grid reaches to infinity, so there is no
+ * outer boundary to allow for; the direct solution's own error is far below (its residual is reported).
  */
 
 import { SolverError } from "./errors.ts";
