@@ -85,7 +85,8 @@ export function answerAt(scene: Scene, built: Built, level: number, tick: Tick):
   if (loaded !== null) addTerminals(table, "loaded", loaded, falls, Object.values(powers).flat());
   table.addSum("coil", powers.coil, falls.resistance);
   table.addSum("heated", powers.heated, falls.power);
-  table.addSum("other", powers.other, falls.power);
+  // A guide's loss goes as the energy in it, and errs as such.
+  table.addSum("other", powers.other, falls.energy);
   partFigures.forEach((p, i) => {
     const touching = scene.bodies.filter((_, b) => p.touches.includes(built.regionOfBody(b)));
     addPart(table, p, i, falls.power, surfaceFall(p.body, touching, scene.frequency));

@@ -19,9 +19,9 @@ export type { Fall };
 export interface Falls {
   /** R and the coil's power. */
   readonly resistance: Fall;
-  /** Power of parts and guides. */
+  /** Power of parts. */
   readonly power: Fall;
-  /** X. */
+  /** X, and guides' losses. */
   readonly energy: Fall;
   /** Stray field by a sum over all sources. */
   readonly field: Fall;
@@ -63,7 +63,7 @@ const hasEdges = ({ material, pieces }: Body): boolean =>
   material.relativePermeability > 1 && pieces.some((p) => p.kind === "polygon");
 
 /** Peak density: a quantile, read in cells that the field's growth towards an edge crosses. */
-export const PEAK: Fall = { order: 0.6, share: 1 };
+export const PEAK: Fall = { order: 2 / 3, share: 1 };
 /** Field at a point within or near copper, from the one cell that holds it. */
 export const NEAR: Fall = { order: 1 / 2, share: 1 };
 
