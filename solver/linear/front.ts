@@ -149,32 +149,37 @@ export function clearFront(c: Float64Array, area: number, n: number): void {
 const LARGE = 200;
 
 /**
- * Eliminates the first p of n rows of the front at `area`; the other area is used up. Entries of L go to `out` from index `entry`, 1/D from
- * index `pivot`. Returns −1, or the pivot (counted within the front; the first of its pair) that is zero or not finite.
+ * Eliminates the first p of n rows of the front at `area`; 1/D goes to `out` from index `pivot`, L stays in the front.
+ * Returns −1, or the pivot (counted within the front; the first of its pair) that is zero or not finite.
  */
 export function eliminate(
   space: Workspace,
   area: number,
   n: number,
   p: number,
-  out: FactorNumbers,
-  entry: number,
+  out: Pick<FactorNumbers, "inverseRe" | "inverseIm">,
   pivot: number,
 ): number {
-  if (p === 0) return -1;
   const { leading, imag } = layoutOf(n);
   const { kernel, numbers: c, inverse, packL, packW } = space;
-  const [front, plane, column] = [8 * area, 8 * imag, 8 * leading];
-  const bad = kernel.eliminate(front, plane, column, 8 * packL, 8 * packW, 8 * inverse, n, p);
+  const bad = kernel.eliminate(8 * area, 8 * imag, 8 * leading, 8 * packL, 8 * packW, 8 * inverse, n, p);
   if (bad >= 0) return bad;
   for (let k = 0; k < p; k++) {
     out.inverseRe[pivot + k] = c[inverse + 2 * k];
     out.inverseIm[pivot + k] = c[inverse + 2 * k + 1];
   }
-  const count = (p * (2 * n - 1 - p)) / 2;
-  const other = area === space.areas[0] ? space.areas[1] : space.areas[0];
-  kernel.pack(front, plane, column, 0, p, n, 1, 8 * other, 8 * (other + count));
-  out.re.set(c.subarray(other, other + count), entry);
-  out.im.set(c.subarray(other + count, other + 2 * count), entry);
   return -1;
+}
+
+/** Copies the first p columns of the front below its diagonal, one after another, to indices `re` and `im` of the workspace. */
+export function packColumns(
+  { kernel }: Workspace,
+  area: number,
+  n: number,
+  p: number,
+  re: number,
+  im: number,
+): void {
+  const { leading, imag } = layoutOf(n);
+  kernel.pack(8 * area, 8 * imag, 8 * leading, 0, p, n, 1, 8 * re, 8 * im);
 }

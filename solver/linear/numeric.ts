@@ -9,16 +9,29 @@ import {
   type FactorNumbers,
   frontWorkspace,
   layoutOf,
+  packColumns,
   type Workspace,
 } from "./front.ts";
 import type { ElementStructure, ElementValues } from "./structure.ts";
-import { type Fronts, isRightChild, triangle } from "./symbolic.ts";
+import { type Fronts, isRightChild, SHELF, triangle } from "./symbolic.ts";
 
 /** Lower triangles by columns, waiting for their parent front: indices into the workspace's numbers. */
 interface Stack {
   readonly re: number;
   readonly im: number;
   top: number;
+}
+
+/**
+ * L on its way from the fronts to the factor: collected in the workspace and copied a few fronts at a time, for each copy makes two objects, and
+ * thousands of them make a heap grow. Indices into the workspace's numbers.
+ */
+interface Shelf {
+  readonly re: number;
+  readonly im: number;
+  /** Numbers of L that left for the factor, and that are here. */
+  gone: number;
+  count: number;
 }
 
 /** How often progress is told: in this many parts of the work. */
@@ -41,8 +54,14 @@ export function factoriseFronts(
     inverseRe: new Float64Array(structure.unknowns),
     inverseIm: new Float64Array(structure.unknowns),
   };
-  const space = frontWorkspace(fronts.largest, 2 * fronts.stack);
+  const space = frontWorkspace(fronts.largest, fronts.room);
   const stack: Stack = { re: space.rest, im: space.rest + fronts.stack, top: 0 };
+  const shelf: Shelf = {
+    re: stack.im + fronts.stack,
+    im: stack.im + fronts.stack + SHELF,
+    gone: 0,
+    count: 0,
+  };
   const c = space.numbers;
   let pivot = 0;
   let told = 0;
@@ -54,8 +73,9 @@ export function factoriseFronts(
       addNeighbour(fronts, f, space, space.areas[(f - 1) & 1], area);
       addWaiting(fronts, stack, f, space, area);
     }
-    const bad = eliminate(space, area, rows[f], pivots[f], out, entryStart[f], pivot);
+    const bad = eliminate(space, area, rows[f], pivots[f], out, pivot);
     if (bad >= 0) throw singular(fronts, pivot + bad);
+    keepColumns(fronts, shelf, f, space, area, out);
     pivot += pivots[f];
     if (!isRightChild(tree, f)) keepRemainder(fronts, stack, f, space, area);
     if (onProgress !== undefined && (f + 1 === count || work[f + 1] - told >= work[count] / REPORTS)) {
@@ -63,6 +83,7 @@ export function factoriseFronts(
       onProgress(told / work[count]);
     }
   }
+  clearShelf(shelf, c, out);
   return out;
 }
 
@@ -127,14 +148,43 @@ function addRemainder(
 ): void {
   const { rowInParent, rowStart } = fronts;
   const { leading, imag } = layoutOf(fronts.rows[f]);
-  const places = rowInParent.subarray(rowStart[g] + fronts.pivots[g], rowStart[g + 1]);
-  // The kernel packs nothing now.
-  integers.set(places, 2 * packL);
-  const [index, end] = [8 * packL, 8 * packL + 4 * places.length];
-  kernel.extend(
-    ...([8 * re, 8 * (im - re), 8 * stride, 8 * change] as const),
-    ...([index, end, 8 * area, 8 * imag, 8 * leading] as const),
-  );
+  // The places go to where the kernel packs L otherwise.
+  const first = rowStart[g] + fronts.pivots[g];
+  const count = rowStart[g + 1] - first;
+  for (let i = 0; i < count; i++) integers[2 * packL + i] = rowInParent[first + i];
+  const [index, end] = [8 * packL, 8 * packL + 4 * count];
+  const [source, plane, target] = [8 * re, 8 * (im - re), 8 * area];
+  kernel.extend(source, plane, 8 * stride, 8 * change, index, end, target, 8 * imag, 8 * leading);
+}
+
+/** Puts the columns of the pivots on the shelf; those of a front too large for it go to the other area, free by now, and straight on. */
+function keepColumns(
+  { pivots, rows, entryStart }: Fronts,
+  shelf: Shelf,
+  f: number,
+  space: Workspace,
+  area: number,
+  out: FactorNumbers,
+): void {
+  const count = entryStart[f + 1] - entryStart[f];
+  if (shelf.count + count > SHELF) clearShelf(shelf, space.numbers, out);
+  if (count <= SHELF) {
+    packColumns(space, area, rows[f], pivots[f], shelf.re + shelf.count, shelf.im + shelf.count);
+    shelf.count += count;
+    return;
+  }
+  const other = space.areas[1 - (f & 1)];
+  packColumns(space, area, rows[f], pivots[f], other, other + count);
+  clearShelf({ re: other, im: other + count, gone: shelf.gone, count }, space.numbers, out);
+  shelf.gone += count;
+}
+
+/** Copies what is on the shelf to the factor. */
+function clearShelf(shelf: Shelf, c: Float64Array, out: FactorNumbers): void {
+  out.re.set(c.subarray(shelf.re, shelf.re + shelf.count), shelf.gone);
+  out.im.set(c.subarray(shelf.im, shelf.im + shelf.count), shelf.gone);
+  shelf.gone += shelf.count;
+  shelf.count = 0;
 }
 
 /** Puts the rows beyond the pivots on the stack. */

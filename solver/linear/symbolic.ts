@@ -10,6 +10,8 @@ import type { ElementStructure } from "./structure.ts";
 
 /** Unknowns of more elements than this are eliminated last in their front. */
 const WIDE = 16;
+/** Numbers of L collected before they are copied to the factor. */
+export const SHELF = 8192;
 /** Larger than any row. */
 const END = 0x7fffffff;
 
@@ -36,6 +38,8 @@ export interface Fronts {
   readonly largest: number;
   /** Most numbers waiting on the stack of left children's remainders. */
   readonly stack: number;
+  /** Real numbers wanted beside the fronts: for that stack and for L on its way (SHELF), and later for a solution. */
+  readonly room: number;
 }
 
 /** The fronts that belong to a tree. */
@@ -56,7 +60,7 @@ export function frontsOf(structure: ElementStructure, tree: Tree): Fronts {
     rowInParent,
     placeOfId,
     newNumber,
-    ...totals(tree, pivots, rows),
+    ...totals(tree, pivots, rows, structure.unknowns),
   };
 }
 
@@ -209,7 +213,8 @@ function totals(
   tree: Tree,
   pivots: Int32Array,
   rows: Int32Array,
-): Pick<Fronts, "entryStart" | "work" | "largest" | "stack"> {
+  unknowns: number,
+): Pick<Fronts, "entryStart" | "work" | "largest" | "stack" | "room"> {
   const fronts = pivots.length;
   const entryStart = new Float64Array(fronts + 1);
   const work = new Float64Array(fronts + 1);
@@ -228,7 +233,7 @@ function totals(
     if (!isRightChild(tree, f)) waiting += triangle(rest);
     stack = Math.max(stack, waiting);
   }
-  return { entryStart, work, largest, stack };
+  return { entryStart, work, largest, stack, room: 2 * Math.max(stack + SHELF, unknowns) };
 }
 
 /** Whether f is the right child of the front after it. */

@@ -100,7 +100,7 @@ Growth exponents p over these sizes (cost ∝ unknownsᵖ): factorisation + one 
   return `
 ## LDLᵀ against SuperLU
 
-The matrices of ${name}, loaded, that \`predict\` factorises, on grids of three levels; complex symmetric, the same for both. One thread each, processes of
+The matrices of ${name}, loaded, that \`predict\` factorises, on grids of several levels; complex symmetric, the same for both. One thread each, processes of
 their own, in turn. SuperLU: \`scipy.sparse.linalg.splu\`, \`permc_spec="MMD_AT_PLUS_A"\`, \`SymmetricMode\`, \`diag_pivot_thresh=0\`; with the ordering known: the same
 on the matrix permuted beforehand, \`NATURAL\` (it still analyses; ours does not). Both have solved the smallest grid's system before the clock starts; "cold": processes
 that have not (ours compiles as it goes). Memory, for both alike: the kernel's peak resident set (VmHWM) of the process's first factorisation and solve, less the
