@@ -1,6 +1,6 @@
 /** Schemas of materials in the design document: a library id, or an inline material. */
 import * as z from "zod";
-import { MU0, materialIds, materials } from "../solver/index.ts";
+import { MU0, materialIdsFor, materials, type Role } from "../solver/index.ts";
 import { celsiusFromKelvin } from "./units.ts";
 
 /** Fault inside a schema: words, where, and what would do. */
@@ -72,9 +72,11 @@ function completed<M extends Magnetic>(m: M): M {
 }
 
 const magnetic = { relativePermeability, saturationT, curve };
-const libraryId = z.enum(materialIds as [string, ...string[]]);
-/** The ids a document may name, for those who offer a choice of them. */
-export const libraryIds: readonly string[] = materialIds;
+const libraryId = (role: Role) => z.enum(materialIdsFor(role) as [string, ...string[]]);
+
+/** The ids a document may name in a role, each with its name in words, for those who offer a choice of them. */
+export const libraryChoices = (role: Role): (readonly [id: string, name: string])[] =>
+  materialIdsFor(role).map((id) => [id, materials.get(id)?.description.split(",")[0] ?? id]);
 
 /** The conductor's inline material has to conduct. */
 const inlineConductor = z.strictObject({ resistivityOhmM, ...magnetic });
@@ -86,15 +88,15 @@ const inlinePart = z.strictObject({ resistivityOhmM: resistivityOhmM.nullable().
 const inlineGuide = inlinePart.extend({ lossTangent: z.number().min(0).max(10).default(0) });
 
 export const ConductorMaterialSchema = z.union([
-  libraryId,
+  libraryId("conductor"),
   inlineConductor.superRefine(checkMagnetic).overwrite(completed),
 ]);
 export const PartMaterialSchema = z.union([
-  libraryId,
+  libraryId("part"),
   inlinePart.superRefine(checkMagnetic).overwrite(completed),
 ]);
 export const GuideMaterialSchema = z.union([
-  libraryId,
+  libraryId("guide"),
   inlineGuide.superRefine(checkMagnetic).overwrite(completed),
 ]);
 

@@ -76,7 +76,7 @@ function driveOf(drive: Design["drive"]): Drive {
 /** The linear material; a curve enters by its foot's slope (where no permeability is given) and its end's polarisation. */
 function materialOf(material: Material, celsius: number): SceneMaterial {
   if (typeof material === "string") {
-    return { ...materialAt(material, kelvinFromCelsius(celsius)), lossTangent: 0, saturation: null };
+    return materialAt(material, kelvinFromCelsius(celsius));
   }
   const { curve } = material;
   return {

@@ -1,5 +1,6 @@
 /** The one place where the schema library's findings become words a coil winder understands. */
 import type * as z from "zod";
+import { materials } from "../solver/index.ts";
 import { type Fault, pointerTo } from "./refusal.ts";
 
 type Issue = z.core.$ZodIssue;
@@ -102,8 +103,16 @@ const wrongKind: ReadonlySet<string> = new Set(["invalid_type", "invalid_value"]
 function libraryWords(path: Path, value: unknown, ids: readonly unknown[]): [string, string] {
   const accepted = `a library id (${ids.join(", ")}), or an object with resistivityOhmM and relativePermeability`;
   if (value === undefined) return [`${label(path)} is missing`, accepted];
-  const library = typeof value === "string" ? `the library has no material “${clipped(value)}”` : undefined;
+  const library = typeof value === "string" ? libraryDetail(path, value) : undefined;
   return [library ?? `${label(path)} is ${shown(value, path)}`, accepted];
+}
+
+/** Why an id is refused: unknown, or known and of no use in this place. */
+function libraryDetail([place]: Path, id: string): string {
+  if (!materials.has(id)) return `the library has no material “${clipped(id)}”`;
+  return place === "coil"
+    ? `${id} is of the library, but nothing to wind a coil from: that takes a metal that is solid and not magnetic`
+    : `${id} is of the library, but no material of a guide: that is magnetic and practically does not conduct`;
 }
 
 /** Keys that are known elsewhere, with the reason why not here. */

@@ -30,8 +30,23 @@ export {
   factorise,
   solve,
 } from "./linear/direct.ts";
-export { type MaterialState, materialAt, materialIds, materials } from "./materials/catalogue.ts";
-export type { Cited, LinearResistivity, MaterialRecord, ResistivityLaw } from "./materials/laws.ts";
+export {
+  type MaterialState,
+  materialAt,
+  materialIdsFor,
+  materials,
+  type Role,
+} from "./materials/catalogue.ts";
+export type {
+  Cited,
+  LinearResistivity,
+  Magnetism,
+  MaterialRecord,
+  ResistivityLaw,
+  Row,
+  Table,
+  Thermal,
+} from "./materials/laws.ts";
 export { type Fall, type GridAnswer, type Kin, type Refined, refine, remaining } from "./refine.ts";
 export type {
   Circuit,

@@ -5,6 +5,7 @@ import { defaults, type ServeOptions } from "../config.ts";
 import { type Solve, startSolver } from "../engine/thread.ts";
 import { exitStatus, type Failure, toFailure, UsageError } from "../errors.ts";
 import { printable } from "../format/sentence.ts";
+import type { MaterialsOptions } from "./materials.ts";
 import { type SolveOptions, solveCommand } from "./solve.ts";
 
 /**
@@ -74,6 +75,14 @@ function commands(entry: URL, solver?: Solve): Command {
     .action((design: string, options: SolveOptions) => {
       endOnSignals();
       return solveCommand(design, options, solver ?? startSolver(entry));
+    });
+  program
+    .command("materials")
+    .description("List the library of materials that a design may name.")
+    .option("--json", "print every number with its source instead of the table")
+    .action(async (options: MaterialsOptions) => {
+      const { materialsCommand } = await import("./materials.ts");
+      materialsCommand(options);
     });
   program
     .command("serve")

@@ -1,5 +1,5 @@
 /** What something is made of, in words: of the library, or a material of one's own by its numbers. */
-import { libraryIds } from "../../../meshes/materials.ts";
+import { libraryChoices } from "../../../meshes/materials.ts";
 import { quantities as q } from "../../entry.ts";
 import { valueAt } from "../../pointer.ts";
 import { objectAt } from "./document.ts";
@@ -29,7 +29,7 @@ export function materialPhrases(document: unknown, at: string, role: Role, whose
     kind: "choice",
     at,
     label: `Material of ${whose}`,
-    options: [...libraryIds.map((id) => [id, id] as const), ...ownWords[role]],
+    options: [...libraryChoices(role), ...ownWords[role]],
     value: typeof value === "string" ? value : value === undefined ? "" : conducts ? "conducting" : "other",
     pick: (draft, kind) => reshapeMaterial(draft, at, kind),
   };
