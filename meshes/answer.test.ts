@@ -90,6 +90,17 @@ describe("one grid's answer", () => {
     expect(energy).toBeGreaterThan(0);
   });
 
+  it("X, which errs as the field does that crowds the current, guards R's bars and the coil's", () => {
+    expect(answer.kin?.get("empty.R")?.[0]?.value).toBe(answer.values.get("empty.X"));
+    for (const name of ["loaded.R", "coil"]) {
+      const [kin] = answer.kin?.get(name) ?? [];
+      expect(kin?.value).toBe(answer.values.get("loaded.X"));
+      // A small part: R's own movement is what counts as a rule.
+      expect(kin?.weight).toBeGreaterThan(0);
+      expect(kin?.weight).toBeLessThan(0.5 * (answer.values.get(name) ?? 0));
+    }
+  });
+
   it("coil, heated and other losses are all of R", () => {
     const total = ["coil", "heated", "other"].reduce((t, name) => t + (answer.values.get(name) ?? 0), 0);
     expect(total / (answer.values.get("loaded.R") ?? 0)).toBeCloseTo(1, 9);

@@ -19,7 +19,7 @@ import {
   type Tick,
 } from "../solver/index.ts";
 import type { Built, State } from "./build.ts";
-import { type Fall, type Falls, fallsOf, kinship, NEAR, PEAK, surfaceFall } from "./falls.ts";
+import { CROWDING, type Fall, type Falls, fallsOf, kinship, NEAR, PEAK, surfaceFall } from "./falls.ts";
 import { readyAt } from "./ready.ts";
 import type { Body, Scene } from "./scene.ts";
 import { extentOf, sphereSurface } from "./surfaces.ts";
@@ -143,6 +143,7 @@ function addTerminals(
   table.add(`${state}.R`, re, falls.resistance, powers);
   const reactive = [...losses.regionEnergy, losses.exteriorEnergy].map((w) => 2 * solution.omega * w);
   table.add(`${state}.X`, im, falls.energy, reactive);
+  table.kin.set(`${state}.R`, [{ value: im, weight: CROWDING * re }]);
 }
 
 interface Powers {
@@ -208,8 +209,15 @@ function addPart(table: Table, p: PartFigures, i: number, power: Fall, surface: 
   );
 }
 
-/** Energies of the parts as kin of their powers. */
-function addKin(table: Table, { losses }: Solved, figures: readonly PartFigures[], weight: number): void {
+/** X as kin of the coil's power, energies of the parts as kin of theirs. */
+function addKin(
+  table: Table,
+  { solution, losses }: Solved,
+  figures: readonly PartFigures[],
+  weight: number,
+): void {
+  const coil = table.values.get("coil") ?? 0;
+  table.kin.set("coil", [{ value: solution.impedance.im, weight: CROWDING * coil }]);
   const kinOf = (p: PartFigures): Kin => ({
     value: losses.regionEnergy[p.region] ?? 0,
     weight: weight * p.power,
