@@ -100,6 +100,16 @@ describe("emberturn solve", () => {
   });
 });
 
+describe("emberturn materials", () => {
+  it("prints the library for people, and as a list with --json", async () => {
+    const table = await run(["materials"]);
+    expect(table).toMatchObject({ status: 0, stderr: "" });
+    expect(table.stdout).toMatch(/^ {2}mild-steel +20 to 1200 /m);
+    const { materials } = JSON.parse((await run(["materials", "--json"])).stdout);
+    expect(materials[0]).toMatchObject({ id: "copper", range: { fromC: -50, toC: 250 } });
+  });
+});
+
 describe("refusals", () => {
   it("name the key, the fault with its numbers, and leave stdout empty", async () => {
     const winding = { form: "helix", boreDiameterMm: 42, turns: 5, pitchMm: 7 };

@@ -20,11 +20,11 @@ export function materialsCommand({ json }: MaterialsOptions): void {
 
 /** The table, 80 wide, and what each material is; ends with a line break. */
 export function renderMaterials(list: MaterialList): string {
-  const head = ["id", "°C", "µΩ·m at 20 °C", "at its end", "µr", "Bs T", "Curie °C"];
+  const head = ["id", "°C", "20 °C µΩ·m", "at end", "µr", "Bs T", "Curie"];
   const rows = list.materials.map(row);
   const lines = [
-    "LIBRARY OF MATERIALS (µr at low field; µr and Bs at 20 °C)",
-    ...columns(rows, ["left", "right", "decimal", "decimal", "right", "decimal", "right"], head),
+    "LIBRARY OF MATERIALS (µr at low field, µr and Bs at 20 °C, Curie point in °C)",
+    ...columns(rows, ["left", "right", "decimal", "decimal", "decimal", "decimal", "decimal"], head),
     "",
     ...wrap(
       "* from memory, or between values from memory: fit for a first answer. --json lists every number with its source, or the spread to expect.",

@@ -5,6 +5,7 @@
  */
 import cylinder from "./cylinder.json";
 import inductance from "./inductance.json";
+import materials from "./materials.json";
 import probeCoil from "./probe-coil.json";
 import proximity from "./proximity.json";
 import skinEffect from "./skin-effect.json";
@@ -44,7 +45,15 @@ export interface CheckValue {
   expected(name: string, index?: number): number;
 }
 
-const TABLES = { inductance, "skin-effect": skinEffect, proximity, cylinder, sphere, "probe-coil": probeCoil };
+const TABLES = {
+  inductance,
+  "skin-effect": skinEffect,
+  proximity,
+  cylinder,
+  sphere,
+  "probe-coil": probeCoil,
+  materials,
+};
 
 /** Name of a table in this folder. */
 export type TableName = keyof typeof TABLES;
