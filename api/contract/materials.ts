@@ -25,7 +25,7 @@ const RowsSchema = z.array(CitedSchema.extend({ atC: z.number() }));
 const TableSchema = z.object({ law: z.literal("table"), rows: RowsSchema });
 
 const MagnetismSchema = z.object({
-  /** From here up it is as air. */
+  /** From here up it is as air. A spread is relative to kelvin. */
   curieC: CitedSchema,
   /** Saturation polarisation at 20 °C. */
   saturationT: CitedSchema,

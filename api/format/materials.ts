@@ -78,7 +78,7 @@ const wireTable = (law: Cited | Table) =>
 
 const wireRow = ({ kelvin, ...cited }: Row) => ({ atC: celsius(kelvin), ...cited });
 
-/** A temperature; its relative spread is of kelvin, and said so in the source. */
+/** A temperature; its relative spread stays that of kelvin. */
 const inCelsius = (cited: Cited): Cited => ({ ...cited, value: celsius(cited.value) });
 
 /** Free of the last bits that the zero of Celsius leaves behind. */
