@@ -80,11 +80,18 @@ the last one's by a part in 10⁸.`,
 function changeTable(rows: readonly WarmRow[]): string {
   return section(
     "A change of one number, warm worker",
-    "After each such solve the frequency alone, then the part's resistivity alone made 5 % larger: time over that of the fresh solve before.",
-    ["case", "asked %", "frequency", "material"],
+    "After each such solve the frequency alone, then the part's resistivity alone made 5 % larger: time over that of the fresh solve before; grid kept: solved on the same patches.",
+    ["case", "asked %", "frequency", "grid kept", "material", "grid kept"],
     rows
       .filter((row) => row.frequency.length > 0)
-      .map((row) => [row.name, `${row.accuracy}`, plain(row.frequency), plain(row.material)]),
+      .map(({ name, accuracy, frequency, material, sameGrid }) => [
+        name,
+        `${accuracy}`,
+        plain(frequency),
+        sameGrid.frequency ? "yes" : "no",
+        plain(material),
+        sameGrid.material ? "yes" : "no",
+      ]),
   );
 }
 

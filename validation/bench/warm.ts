@@ -1,5 +1,6 @@
 /** Predictions in a thread that has solved before: designs it has not seen, and changes of one number of the design just solved. */
 import { parentPort, Worker } from "node:worker_threads";
+import { build } from "../../meshes/build.ts";
 import { checkDesign } from "../../meshes/check.ts";
 import { predict } from "../../meshes/predict.ts";
 import type { Result } from "../../meshes/result.ts";
@@ -22,6 +23,8 @@ export interface WarmRow {
   readonly fresh: readonly number[];
   readonly frequency: readonly number[];
   readonly material: readonly number[];
+  /** Whether the changed designs were solved on the very patches of the fresh one, every time. */
+  readonly sameGrid: { readonly frequency: boolean; readonly material: boolean };
   readonly unknowns: number;
   readonly met: boolean;
   readonly errors: Errors;
@@ -30,14 +33,23 @@ export interface WarmRow {
 interface Timing {
   readonly seconds: number;
   readonly result: Result;
+  /** Number of the patches it was solved on, in order of first appearance. */
+  readonly mesh: number;
 }
 
 /** In the thread: every message is a design, every answer its timing. */
 export function serveTimings(): void {
+  const meshes = new WeakMap<object, number>();
+  let seen = 0;
   parentPort?.on("message", (design: unknown) => {
     const started = performance.now();
-    const { result } = predict(checkDesign(design));
-    const timing: Timing = { seconds: (performance.now() - started) / 1000, result };
+    const checked = checkDesign(design);
+    const { result } = predict(checked);
+    const seconds = (performance.now() - started) / 1000;
+    // Kept from the solve just made, and the same object as before where the grid was kept.
+    const { mesh } = build(checked.scene);
+    const timing: Timing = { seconds, result, mesh: meshes.get(mesh) ?? ++seen };
+    meshes.set(mesh, timing.mesh);
     parentPort?.postMessage(timing);
   });
 }
@@ -57,7 +69,9 @@ export async function warmRows(
       thread.postMessage(design);
     });
   let seen = 0;
-  const jobs = ACCURACIES.flatMap((accuracy) => cases.map((of) => ({ of, accuracy, times: newTimes() })));
+  const jobs = ACCURACIES.flatMap((accuracy) =>
+    cases.map((of) => ({ of, accuracy, times: newTimes(), sameGrid: { frequency: true, material: true } })),
+  );
   const results = new Map<(typeof jobs)[number], Result>();
   try {
     for (const { design } of cases) await timed(atAccuracy(unseen(design, ++seen), 0.2));
@@ -72,8 +86,9 @@ export async function warmRows(
           ["frequency", otherFrequency],
           ["material", otherMaterial],
         ] as const) {
-          const { seconds } = await timed(atAccuracy(change(design), job.accuracy));
+          const { seconds, mesh } = await timed(atAccuracy(change(design), job.accuracy));
           job.times[key].push(seconds / fresh.seconds);
+          job.sameGrid[key] &&= mesh === fresh.mesh;
         }
       }
       tell(`warm thread: round ${round + 1} of ${rounds}`);
@@ -81,10 +96,11 @@ export async function warmRows(
   } finally {
     await thread.terminate();
   }
-  return [...results].map(([{ of, accuracy, times }, result]) => ({
+  return [...results].map(([{ of, accuracy, times, sameGrid }, result]) => ({
     name: of.name,
     accuracy,
     ...times,
+    sameGrid,
     unknowns: result.numerics.unknowns,
     met: result.numerics.accuracyMet,
     errors: errorsOf(result, of.truth),
