@@ -44,8 +44,14 @@ async function withService(action: () => Promise<void>): Promise<void> {
   } catch (error) {
     if (error instanceof client.Refused) problem.value = error.problem;
     else if (error instanceof client.Unreachable) lost();
-    else throw error;
+    else problem.value = ownFault(error);
   }
+}
+
+/** What the page itself stumbled over, such as an answer of another version's: told, so that nothing hangs in silence. */
+function ownFault(error: unknown): Problem {
+  const detail = `${error instanceof Error ? error.message : String(error)} Reloading the page may help.`;
+  return { type: "about:blank", title: "The page stumbled", status: 0, detail, errors: [] };
 }
 
 const retryMs = 1500;
@@ -67,7 +73,9 @@ async function takeUp(): Promise<void> {
   reachable.value = true;
   await refreshShelf();
   const inView = job.value;
-  if (inView !== null && !ended(inView.state)) await follow(await client.jobOf(inView.id));
+  // One that ended just when the service went may not have been fetched yet.
+  const missing = inView !== null && (!ended(inView.state) || answer.value?.id !== inView.id);
+  if (missing) await follow(await client.jobOf(inView.id));
 }
 
 async function refreshShelf(): Promise<void> {

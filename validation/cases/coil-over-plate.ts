@@ -1,6 +1,7 @@
 /** Coil of rectangular section over a conducting plate: what the plate adds to its impedance. */
-import { box, conducting, meshOf, PASSIVE, reflectedImpedance, skinDepth, WINDING } from "../bench.ts";
+
 import { type Check, type Constants, type Row, relativeRow } from "../check.ts";
+import { box, conducting, meshOf, PASSIVE, reflectedImpedance, skinDepth, WINDING } from "../setups.ts";
 import { checkValue } from "../tables/read.ts";
 
 /** Radius of the disc that stands for the endless plate, in outer coil radii. */

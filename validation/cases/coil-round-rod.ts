@@ -1,6 +1,7 @@
 /** Coil of rectangular section round a long rod or tube: what the rod adds to its impedance. */
-import { box, conducting, meshOf, PASSIVE, reflectedImpedance, skinDepth, WINDING } from "../bench.ts";
+
 import { type Check, type Constants, type Row, relativeRow } from "../check.ts";
+import { box, conducting, meshOf, PASSIVE, reflectedImpedance, skinDepth, WINDING } from "../setups.ts";
 import { checkValue } from "../tables/read.ts";
 
 /** Half-length of the rod, in coil heights. */

@@ -10,10 +10,10 @@ import {
 } from "../../solver/index.ts";
 import { solidCylinder } from "../analytic/cylinder.ts";
 import { solidSphere } from "../analytic/sphere.ts";
-import { air, conducting, disc, meshOf, metal, omegaFor, PASSIVE } from "../bench.ts";
 import { absoluteRow, type Check, type Constants, type Row } from "../check.ts";
 import { coarseFigures } from "../ninepoint/field.ts";
 import { observedOrder } from "../order.ts";
+import { air, conducting, disc, meshOf, metal, omegaFor, PASSIVE } from "../setups.ts";
 
 const CONDUCTIVITY = 1e6;
 const RADIUS = 0.01;

@@ -1,7 +1,7 @@
 /** Infinite cylinders and tubes in a uniform axial field: one slice with natural ends. */
 import { lossesOf, MU0, type RegionMaterial, solveApplied, tensorPatches } from "../../solver/index.ts";
-import { air, gradedInward, metal, omegaFor, onTwoGrids, skinDepth } from "../bench.ts";
 import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
+import { air, gradedInward, metal, omegaFor, onTwoGrids, skinDepth } from "../setups.ts";
 import { caseIds, checkValue } from "../tables/read.ts";
 
 const CONDUCTIVITY = 1e6;

@@ -1,5 +1,6 @@
 /** One ring of round wire: uniform current, and the limit of all current on its surface. */
 import { type Circuit, solvePrescribed, solveState } from "../../solver/index.ts";
+import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
 import {
   air,
   conducting,
@@ -10,8 +11,7 @@ import {
   omegaFor,
   onTwoGrids,
   PASSIVE,
-} from "../bench.ts";
-import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
+} from "../setups.ts";
 import { checkValue } from "../tables/read.ts";
 
 const COPPER = 5.8e7;

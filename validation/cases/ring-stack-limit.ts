@@ -1,9 +1,9 @@
 /** N rings of round wire at the skin limit: inductance, loss, and how the loss is shared between the rings. */
 import { MU0 } from "../../solver/index.ts";
 import { skinDepth } from "../analytic/skin.ts";
-import { limitOfHalves } from "../bench.ts";
 import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
 import { resultOf, ringsDesign } from "../document.ts";
+import { limitOfHalves } from "../setups.ts";
 import { checkValue } from "../tables/read.ts";
 
 const RESISTIVITY = 1.7e-8;

@@ -1,7 +1,7 @@
 /** Solenoids: a current sheet, a coil of rectangular section, and a stack of round wires, all of uniform current. */
 import { solvePrescribed } from "../../solver/index.ts";
-import { air, box, disc, meshOf, onTwoGrids, PASSIVE, WINDING } from "../bench.ts";
 import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
+import { air, box, disc, meshOf, onTwoGrids, PASSIVE, WINDING } from "../setups.ts";
 import { checkValue } from "../tables/read.ts";
 
 const OPEN = { kind: "open", radius: 1.5, mirror: false } as const;

@@ -7,8 +7,8 @@ import {
   type RegionMaterial,
   solveApplied,
 } from "../../solver/index.ts";
-import { air, conducting, disc, meshOf, metal, omegaFor, onTwoGrids, PASSIVE, skinDepth } from "../bench.ts";
 import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
+import { air, conducting, disc, meshOf, metal, omegaFor, onTwoGrids, PASSIVE, skinDepth } from "../setups.ts";
 import { checkValue } from "../tables/read.ts";
 
 const OPEN = { kind: "open", radius: 1.5, mirror: false } as const;

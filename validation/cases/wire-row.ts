@@ -8,8 +8,8 @@ import {
   solveState,
 } from "../../solver/index.ts";
 import { tubeImpedanceRatio } from "../analytic/skin.ts";
-import { air, conducting, disc, limitOfHalves, meshOf, metal, omegaFor, PASSIVE } from "../bench.ts";
 import { type Check, type Constants, type Figure, type Row, relativeRow } from "../check.ts";
+import { air, conducting, disc, limitOfHalves, meshOf, metal, omegaFor, PASSIVE } from "../setups.ts";
 import { caseIds, checkValue } from "../tables/read.ts";
 
 const COPPER = 5.8e7;
